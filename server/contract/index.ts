@@ -1,0 +1,16 @@
+export * from './common';
+export * from './route';
+export * from './gyms';
+export * from './people';
+export * from './lifts';
+export * from './takes';
+export * from './answers';
+export * from './turnaround';
+export * from './live';
+export * from './jobs';
+export * as accountRoutes from './routes/accounts';
+export * as libraryRoutes from './routes/library';
+export * as takeRoutes from './routes/takes';
+export * as boardRoutes from './routes/board';
+export * as ownerRoutes from './routes/owner';
+export * as liveRoutes from './routes/live';
