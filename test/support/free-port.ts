@@ -1,0 +1,1 @@
+export { freePort } from '../../server/start/ports';
