@@ -1,0 +1,3 @@
+export { mails } from './mails';
+export { createNotices, notify, sendMailLater, type NewNotice, type Notices } from './notices-service';
+export { registerNoticesRoutes } from './notices-routes';
