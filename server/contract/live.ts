@@ -61,6 +61,7 @@ export const NotificationDto = z.object({
 });
 export type NotificationDto = z.infer<typeof NotificationDto>;
 export const NotificationsDto = z.object({ items: z.array(NotificationDto), unread: z.number().int() });
+export type NotificationsDto = z.infer<typeof NotificationsDto>;
 export const ReadNotifications = z.object({ ids: z.array(Id).max(200).optional() }).strict();
 
 export const MailDto = z.object({
@@ -72,6 +73,7 @@ export const MailDto = z.object({
 });
 export type MailDto = z.infer<typeof MailDto>;
 export const MailboxDto = z.object({ items: z.array(MailDto) });
+export type MailboxDto = z.infer<typeof MailboxDto>;
 
 export const DemoDto = z.object({
   accounts: z.array(z.object({ name: z.string(), role: Role, email: z.string(), password: z.string() })),

@@ -1,0 +1,9 @@
+import type { Routes } from '@angular/router';
+
+export const ROUTES_ANSWERS: Routes = [
+  {
+    path: '',
+    title: 'Answers',
+    loadComponent: () => import('./answers-page').then((m) => m.AnswersPage),
+  },
+];

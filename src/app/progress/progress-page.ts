@@ -1,0 +1,10 @@
+import { ChangeDetectionStrategy, Component } from '@angular/core';
+import { PageHeading } from '../shared/page-heading/page-heading';
+
+@Component({
+  selector: 'mf-progress-page',
+  imports: [PageHeading],
+  template: `<div class="mf-page"><mf-page-heading heading="Progress" /></div>`,
+  changeDetection: ChangeDetectionStrategy.OnPush,
+})
+export class ProgressPage {}

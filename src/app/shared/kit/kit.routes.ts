@@ -1,0 +1,5 @@
+import type { Routes } from '@angular/router';
+
+export const ROUTES_KIT: Routes = [
+  { path: '', loadComponent: () => import('./kit-page').then((m) => m.KitPage) },
+];
