@@ -1,0 +1,2 @@
+export { createClips, type ClipsService } from './clips-service';
+export { registerClipsRoutes } from './clips-routes';

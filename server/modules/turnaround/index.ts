@@ -1,0 +1,2 @@
+export { registerTurnaroundRoutes } from './turnaround-routes';
+export { createTurnaround, type TurnaroundService } from './turnaround-service';
