@@ -17,8 +17,8 @@ export function openDatabase(url: string, poolSize = 10): Database {
       password: decodeURIComponent(password),
       database: pathname.slice(1),
       timezone: 'Z',
-      // mysql2 takes a collation's name here.
-      charset: 'utf8mb4_unicode_ci',
+      // knex writes this into CREATE TABLE, so it is a character set; the collation is set below.
+      charset: 'utf8mb4',
       supportBigNumbers: true,
       bigNumberStrings: false,
       decimalNumbers: true,
@@ -31,7 +31,7 @@ export function openDatabase(url: string, poolSize = 10): Database {
         done: (error: Error | null, connection: unknown) => void,
       ) => {
         connection.query(
-          "SET time_zone = '+00:00', SESSION transaction_isolation = 'READ-COMMITTED'",
+          "SET NAMES utf8mb4 COLLATE utf8mb4_unicode_ci, time_zone = '+00:00', tx_isolation = 'READ-COMMITTED'",
           (error) => {
             done(error, connection);
           },

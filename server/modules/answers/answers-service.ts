@@ -12,7 +12,16 @@ import { liftsByIds } from '../lifts';
 import { mails, notify, sendMailLater } from '../notices';
 import { names, staffOf } from '../people';
 import { heldTake } from '../queue';
-import { loadVisible, lockedTake, mayBeSeen, setAnswered, tellTake, wordsFor, type TakeRow } from '../takes';
+import {
+  loadVisible,
+  lockedTake,
+  mayBeSeen,
+  memberFacts,
+  setAnswered,
+  tellTake,
+  wordsFor,
+  type TakeRow,
+} from '../takes';
 import { replyDto } from './answer-dtos';
 import { insertAnswer, insertReply } from './answers-repository';
 import { commentsOf, deleteDraft } from './board-repository';
@@ -70,7 +79,7 @@ export function createAnswersService(platform: Platform, deps: AnswersDeps): Ans
       topCue,
       link: `${config.publicUrl}${link}`,
     });
-    const email = await emailOf(trx, take.gymId, take.memberId);
+    const email = (await memberFacts(trx, take.gymId, take.memberId, now))?.email;
     if (email) await sendMailLater(trx, email, mail, now);
   };
 

@@ -14,8 +14,7 @@ const GAVE_UP: Explanation = {
 const isKnown = (reason: string): reason is keyof typeof EXPLANATIONS => Object.hasOwn(EXPLANATIONS, reason);
 
 /** Why a clip or its take cannot be used, in the member's words. */
-export function problemOf(reason: string | null): ClipProblem | null {
-  if (reason === null) return null;
+export function problemOf(reason: string): ClipProblem {
   return { reason, ...(isKnown(reason) ? EXPLANATIONS[reason] : GAVE_UP) };
 }
 

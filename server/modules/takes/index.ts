@@ -1,4 +1,5 @@
 export { clipDto } from './clip-dto';
+export { memberFacts } from './member-query';
 export { clipsOfTakes, type ClipRow } from './take-clips-repository';
 export { takeDtos, takeDtosByIds } from './take-dtos';
 export { clipUnplayable, clipsReady, lockedTake, tellTake, wordsFor } from './take-flow';

@@ -4,8 +4,8 @@ import { notFound } from '../../platform/errors';
 import { recordEvent } from '../../platform/events';
 import { enqueueJob } from '../../platform/jobs';
 import { liftsByIds } from '../lifts';
-import { mails, notify, sendMailLater } from '../notices';
-import { contactOf, names, staffOf } from '../people';
+import { notify } from '../notices';
+import { names, staffOf } from '../people';
 import { problemOf } from './clip-dto';
 import { clipsOfTakes, type ClipRow } from './take-clips-repository';
 import type { TakeRow } from './take-row';
@@ -95,8 +95,7 @@ export async function clipUnplayable(
   if (take?.state !== 'processing') return;
   await setUnplayable(trx, gymId, takeId, reason);
   await tellTake(trx, take, 'take.unplayable', null, now);
-  const problem = problemOf(reason);
-  if (!problem) return;
+  const { message, remedy } = problemOf(reason);
   const { lift } = await wordsFor(trx, take);
   await notify(
     trx,
@@ -105,7 +104,7 @@ export async function clipUnplayable(
       userIds: [take.memberId],
       kind: 'take-unplayable',
       title: `Your ${lift.toLowerCase()} clip could not be used`,
-      body: `${problem.message} ${problem.remedy}`,
+      body: `${message} ${remedy}`,
       link: `/filming/${take.assignmentId}`,
     },
     now,

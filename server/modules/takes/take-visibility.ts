@@ -1,18 +1,20 @@
 import type { Database, Transaction } from '../../platform/database';
 import { forbidden, notFound } from '../../platform/errors';
 import type { Actor } from '../../platform/http/actor';
-import { needsGuardianConsent } from '../people';
+import { memberFacts } from './member-query';
 import { takeOf } from './take-flow';
 import type { TakeRow } from './take-row';
 
 type Db = Database | Transaction;
 
 /** Whether the take's member is under 18 and no guardian's consent is recorded. */
-export const needsConsent = (
+export async function needsConsent(
   db: Db,
   take: Pick<TakeRow, 'gymId' | 'memberId'>,
   now: Date,
-): Promise<boolean> => needsGuardianConsent(db, take.gymId, take.memberId, now);
+): Promise<boolean> {
+  return (await memberFacts(db, take.gymId, take.memberId, now))?.needsConsent ?? false;
+}
 
 /**
  * The take, when the actor may see it: members their own, coaches those of their gym that were handed in.

@@ -302,7 +302,7 @@ export interface HistoryRow {
 export async function takeHistory(db: Db, gymId: string, takeId: string): Promise<HistoryRow[]> {
   const rows: { type: string; at: Date; actor_id: string | null }[] = await db('events')
     .where({ gym_id: gymId, take_id: takeId })
-    .andWhereLike('type', 'take.%')
+    .andWhere('type', 'like', 'take.%')
     .orderBy('id')
     .select('type', 'at', 'actor_id');
   return rows.map((row) => ({ type: row.type, at: row.at, actorId: row.actor_id }));
