@@ -165,7 +165,7 @@ describe('handing a take in', () => {
     for (const view of ['front', 'side']) await scene.upload(minor, take.id, view, videoBytes(3000));
     const answer = await submit(minor, take.id);
     expect(answer.status).toBe(422);
-    expect(answer.body['detail']).toContain('guardian');
+    expect(answer.text).toContain('guardian');
     await scene.database('users').where({ id: minor.id }).update({ guardian_consent_at: scene.now() });
     expect((await submit(minor, take.id)).status).toBe(200);
   });

@@ -1,6 +1,6 @@
 import * as z from 'zod';
 import type { AnswerDto, ProgressDto, TakeDetailDto } from '../../contract/answers';
-import { View, type Page } from '../../contract/common';
+import { type View, type Page } from '../../contract/common';
 import type { ParsedBodyOf, QueryOf } from '../../contract/route';
 import type * as takeRoutes from '../../contract/routes/takes';
 import type { AssignmentDto, TakeDto } from '../../contract/takes';
