@@ -2,7 +2,7 @@ import type { Request, Response } from 'express';
 import type { View } from '../../contract/common';
 import type { ClipDto } from '../../contract/takes';
 import { inTransaction, type Database, type Transaction } from '../../platform/database';
-import { conflict, forbidden, notFound, refused } from '../../platform/errors';
+import { AppError, conflict, forbidden, notFound, refused } from '../../platform/errors';
 import { recordEvent } from '../../platform/events';
 import type { Actor } from '../../platform/http/actor';
 import { createRateLimit } from '../../platform/http/rate-limits';
@@ -59,6 +59,21 @@ export function createClips(platform: Platform): ClipsService {
   const uploads = createRateLimit(database, 'clip-upload', UPLOADS_A_DAY, 24 * 3600);
   const responses = createStoredResponses(store);
   const viewed = new Set<string>();
+
+  const countUpload = async (memberId: string) => {
+    try {
+      await uploads.consume(memberId);
+    } catch (error) {
+      if (!(error instanceof AppError)) throw error;
+      throw new AppError(
+        429,
+        'too-many-clips',
+        `That were ${UPLOADS_A_DAY} clips within a day, as many as one member may send. Send the next one tomorrow.`,
+        error.extra,
+        { cause: error },
+      );
+    }
+  };
 
   const dtoOf = async (db: Database | Transaction, gymId: string, takeId: string, clipId: string) => {
     const row = (await clipsOfTakes(db, gymId, [takeId])).find((clip) => clip.id === clipId);
@@ -147,7 +162,7 @@ export function createClips(platform: Platform): ClipsService {
           `This take asks for ${take.views.map((asked) => `the ${asked} view`).join(' and ')}, not the ${view} view.`,
         );
       }
-      await uploads.consume(actor.userId);
+      await countUpload(actor.userId);
       const id = newId();
       const originalKey = `${homeOf(actor.gymId, takeId, id)}original`;
       const received = await receiveUpload(req, res, {

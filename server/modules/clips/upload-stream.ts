@@ -7,7 +7,6 @@ import { SNIFF_BYTES, sniffContainer } from '../../media/sniff';
 import { AppError, malformed, refused } from '../../platform/errors';
 import type { ObjectStore } from '../../platform/object-store';
 
-/** Without a byte for this long the sender is taken for gone, ms. */
 const NO_PROGRESS_MS = 30_000;
 /** What multipart framing and small fields may add to the file, bytes. */
 const FRAMING_BYTES = 64 * 1024;
@@ -23,6 +22,8 @@ export interface UploadTarget {
   readonly store: ObjectStore;
   readonly key: string;
   readonly maxBytes: number;
+  /** Without a byte for this long the sender is taken for gone, ms. */
+  readonly noProgressMs?: number;
 }
 
 const megabytes = (bytes: number) => Math.floor(bytes / 1_000_000);
@@ -132,7 +133,7 @@ export async function receiveUpload(
       // Once the file has come, it is the store that takes its time, not the sender.
       if (storing) timer.refresh();
       else fail(stalled());
-    }, NO_PROGRESS_MS);
+    }, target.noProgressMs ?? NO_PROGRESS_MS);
     abort.signal.addEventListener('abort', () => {
       clearTimeout(timer);
     });

@@ -8,6 +8,7 @@ import { coachingClock } from '../../calc/hours';
 import { answerBy, queueRank } from '../../calc/queue-order';
 import { inTransaction, isDuplicate, type Database, type Transaction } from '../../platform/database';
 import { conflict, malformed, notFound, refused } from '../../platform/errors';
+import { recordEvent } from '../../platform/events';
 import type { Actor } from '../../platform/http/actor';
 import { decodeCursor, encodeCursor } from '../../platform/http/paging';
 import { newId } from '../../platform/ids';
@@ -147,7 +148,12 @@ export function createTakes(platform: Platform, deps: TakesDeps): TakesService {
         wordsOf(words),
         now,
       );
-      await tellTake(trx, { id, gymId, memberId: userId }, 'take.created', userId, now);
+      // Coaches hear of a take when it is handed in.
+      await recordEvent(
+        trx,
+        { gymId, type: 'take.created', actorId: userId, takeId: id, to: { staff: false, userId } },
+        now,
+      );
       return dtoOf(trx, gymId, id);
     });
 

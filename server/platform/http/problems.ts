@@ -9,6 +9,7 @@ const TITLES: Record<number, string> = {
   401: 'Not signed in',
   403: 'Not allowed',
   404: 'Not here',
+  408: 'Timed out',
   409: 'Not now',
   413: 'Too large',
   415: 'Wrong kind of file',
