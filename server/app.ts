@@ -1,0 +1,116 @@
+import compression from 'compression';
+import cookieParser from 'cookie-parser';
+import express, { type Express } from 'express';
+import helmet from 'helmet';
+import { pinoHttp } from 'pino-http';
+import { answersOf, createAnswers, registerAnswersRoutes } from './modules/answers';
+import { createAssignments, registerAssignmentsRoutes } from './modules/assignments';
+import { createAuth, createAuthenticate, registerAuthRoutes } from './modules/auth';
+import { createClips, registerClipsRoutes } from './modules/clips';
+import { createGyms, registerGymsRoutes } from './modules/gyms';
+import { createLifts, registerLiftsRoutes } from './modules/lifts';
+import { createNotices, registerNoticesRoutes } from './modules/notices';
+import { createMetrics, registerEventStreamRoutes, registerOperationsRoutes } from './modules/operations';
+import { createPeople, registerPeopleRoutes } from './modules/people';
+import { createQueue, registerQueueRoutes } from './modules/queue';
+import { createTakes, registerTakesRoutes } from './modules/takes';
+import { createTurnaround, registerTurnaroundRoutes } from './modules/turnaround';
+import { serveClient } from './platform/http/client-files';
+import { cookieNames } from './platform/http/cookies';
+import { crossSiteProtection } from './platform/http/csrf';
+import { problemHandler, unknownRoute } from './platform/http/problems';
+import { createRoutes, type Routes } from './platform/http/routes';
+import type { Mailer } from './platform/mail';
+import type { Platform } from './platform/platform';
+
+export const VERSION = '0.1.0';
+
+export interface App {
+  readonly app: Express;
+  readonly routes: Routes;
+}
+
+/** The Express application from its parts; opens nothing and listens nowhere. */
+export function buildApp(platform: Platform, mailer: Mailer): App {
+  const { config, logger } = platform;
+  const cookies = cookieNames(config.secureCookies);
+  const routes = createRoutes({
+    database: platform.database,
+    clock: platform.clock,
+    cookies,
+    authenticate: createAuthenticate(platform),
+  });
+  const metrics = createMetrics(platform);
+
+  const takes = createTakes(platform, { answersOf });
+  registerAuthRoutes(routes, createAuth(platform), cookies);
+  registerGymsRoutes(routes, createGyms(platform));
+  registerPeopleRoutes(routes, createPeople(platform), cookies);
+  registerLiftsRoutes(routes, createLifts(platform));
+  registerAssignmentsRoutes(routes, createAssignments(platform, { takesOf: takes.takesOf }));
+  registerTakesRoutes(routes, takes);
+  registerClipsRoutes(routes, createClips(platform));
+  registerQueueRoutes(routes, createQueue(platform));
+  registerAnswersRoutes(routes, createAnswers(platform, { detailOf: takes.get }));
+  registerTurnaroundRoutes(routes, createTurnaround(platform));
+  registerNoticesRoutes(routes, createNotices(platform));
+  registerEventStreamRoutes(routes, platform);
+  registerOperationsRoutes(routes, platform, { mailer, metrics, version: VERSION });
+
+  const app = express();
+  app.disable('x-powered-by');
+  if (config.trustProxy) app.set('trust proxy', config.trustProxy);
+  app.use(
+    pinoHttp({
+      logger,
+      autoLogging: { ignore: (req) => req.url === '/api/health' },
+      customLogLevel: (_req, res) => (res.statusCode >= 500 ? 'error' : 'info'),
+    }),
+  );
+  app.use(
+    helmet({
+      contentSecurityPolicy: {
+        directives: {
+          defaultSrc: ["'self'"],
+          scriptSrc: ["'self'"],
+          // Angular writes component styles into style elements; script stays strict.
+          styleSrc: ["'self'", "'unsafe-inline'"],
+          imgSrc: ["'self'", 'data:', 'blob:'],
+          mediaSrc: [
+            "'self'",
+            'blob:',
+            ...(config.store.publicEndpoint ? [config.store.publicEndpoint] : []),
+          ],
+          connectSrc: ["'self'"],
+          fontSrc: ["'self'"],
+          objectSrc: ["'none'"],
+          frameAncestors: ["'none'"],
+          baseUri: ["'self'"],
+          formAction: ["'self'"],
+          upgradeInsecureRequests: config.secureCookies ? [] : null,
+        },
+      },
+      strictTransportSecurity: config.secureCookies ? { maxAge: 31_536_000, includeSubDomains: true } : false,
+      crossOriginEmbedderPolicy: false,
+      referrerPolicy: { policy: 'same-origin' },
+    }),
+  );
+  app.use(
+    '/api',
+    // An event stream must reach its reader line by line, and clips do not get smaller.
+    compression({
+      filter: (req, res) =>
+        !/event-stream|video|image|zip/.test(String(res.getHeader('Content-Type'))) &&
+        compression.filter(req, res),
+    }),
+    cookieParser(),
+    crossSiteProtection(config.secureCookies),
+    metrics.observe,
+  );
+  app.use(routes.router);
+  app.use('/api', unknownRoute);
+  app.use(serveClient(config.clientDir));
+  app.use(unknownRoute);
+  app.use(problemHandler(logger));
+  return { app, routes };
+}

@@ -1,0 +1,2 @@
+export { beat, findClip, pruneProgressEvents, type ClipToProcess } from './processing-repository';
+export { publishClip, refuseClip, reportProgress } from './processing-service';
