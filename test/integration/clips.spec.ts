@@ -301,6 +301,21 @@ describe('watching a clip', () => {
     expect(head.headers.get('content-length')).toBe('1234');
   });
 
+  it('goes on for others when a player leaves in the middle', async () => {
+    const big = await draft();
+    const uploaded = (await scene.upload<ClipDto>(member, big.id, 'front', videoBytes(2000))).body;
+    await scene.makeReady(uploaded.id, Buffer.alloc(9_000_000, 3));
+    const leaving = new AbortController();
+    const path = `${scene.baseUrl}/api/clips/${uploaded.id}/proxy`;
+    const answer = await fetch(path, { headers: scene.headers(member), signal: leaving.signal });
+    const reader = answer.body?.getReader();
+    expect((await reader?.read())?.done).toBe(false);
+    leaving.abort();
+    await expect(reader?.read()).rejects.toThrow('abort');
+    const again = await fetch(path, { headers: scene.headers(member) });
+    expect((await again.arrayBuffer()).byteLength).toBe(9_000_000);
+  });
+
   it('gives stills, and nothing where there is none', async () => {
     const poster = await scene.call(coach, 'GET', clip.media?.poster ?? '');
     expect(poster).toMatchObject({ status: 200, text: 'poster' });

@@ -17,6 +17,13 @@ export interface StoredResponses {
   send(req: Request, res: Response, key: string, contentType: string): Promise<void>;
 }
 
+/** A player that seeks or closes leaves in the middle of an answer; that is no failure. */
+function isLeaving(error: unknown, gone: AbortSignal): boolean {
+  if (!(error instanceof Error)) return false;
+  const closed = 'code' in error && error.code === 'ERR_STREAM_PREMATURE_CLOSE';
+  return closed || (gone.aborted && error.name === 'AbortError');
+}
+
 export function createStoredResponses(store: ObjectStore): StoredResponses {
   const sizes = new Map<string, number>();
 
@@ -84,8 +91,7 @@ export function createStoredResponses(store: ObjectStore): StoredResponses {
       }
       await pipeline(body, res);
     } catch (error) {
-      // A player that seeks or closes leaves in the middle; that is no failure.
-      if (!res.writableEnded && !gone.signal.aborted) throw error;
+      if (!isLeaving(error, gone.signal)) throw error;
     } finally {
       res.off('close', leave);
     }

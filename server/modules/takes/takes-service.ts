@@ -1,32 +1,26 @@
 import * as z from 'zod';
 import type { AnswerDto, ProgressDto, TakeDetailDto } from '../../contract/answers';
-import { type View, type Page } from '../../contract/common';
+import type { Page, View } from '../../contract/common';
 import type { ParsedBodyOf, QueryOf } from '../../contract/route';
 import type * as takeRoutes from '../../contract/routes/takes';
 import type { AssignmentDto, TakeDto } from '../../contract/takes';
-import { coachingClock } from '../../calc/hours';
-import { answerBy, queueRank } from '../../calc/queue-order';
 import { inTransaction, isDuplicate, type Database, type Transaction } from '../../platform/database';
-import { conflict, malformed, notFound, refused } from '../../platform/errors';
+import { conflict, malformed, notFound } from '../../platform/errors';
 import { recordEvent } from '../../platform/events';
 import type { Actor } from '../../platform/http/actor';
 import { decodeCursor, encodeCursor } from '../../platform/http/paging';
 import { newId } from '../../platform/ids';
 import { enqueueJob } from '../../platform/jobs';
 import type { Platform } from '../../platform/platform';
-import { assignmentsByIds } from '../assignments';
-import { gymOf } from '../gyms';
 import { liftsByIds } from '../lifts';
-import { notify } from '../notices';
-import { names, staffOf } from '../people';
+import { names } from '../people';
 import { takeDtos } from './take-dtos';
 import { clipsOfTakes, deleteClipsOfTake, resetUnplayableClips } from './take-clips-repository';
-import { lockedTake, takeOf, tellTake, waitWhenReady, wordsFor } from './take-flow';
+import { lockedTake, takeOf, tellTake, waitWhenReady } from './take-flow';
 import type { TakeRow } from './take-row';
-import { loadVisible, needsConsent } from './take-visibility';
+import { assignmentOf, submitTake } from './take-submission';
+import { loadVisible } from './take-visibility';
 import * as repository from './takes-repository';
-
-const HOUR = 3_600_000;
 
 export interface TakesDeps {
   /** The answers sent to the takes, by take. */
@@ -74,8 +68,6 @@ const forReader = (assignment: AssignmentDto, actor: Actor): AssignmentDto =>
     ? { ...assignment, audience: { memberIds: [actor.userId] } }
     : assignment;
 
-const viewWords = (views: readonly View[]) => views.map((view) => `the ${view} clip`).join(' and ');
-
 export function createTakes(platform: Platform, deps: TakesDeps): TakesService {
   const { database, clock } = platform;
 
@@ -83,12 +75,6 @@ export function createTakes(platform: Platform, deps: TakesDeps): TakesService {
     const [dto] = await takeDtos(db, gymId, [await takeOf(db, gymId, takeId)], clock.now());
     if (!dto) throw notFound('That take');
     return dto;
-  };
-
-  const assignmentOf = async (db: Database | Transaction, gymId: string, id: string) => {
-    const assignment = (await assignmentsByIds(db, gymId, [id])).get(id);
-    if (!assignment) throw notFound('That assignment');
-    return assignment;
   };
 
   /** Runs `work` on the caller's own take, held against other changes, and answers with the take after it. */
@@ -157,43 +143,6 @@ export function createTakes(platform: Platform, deps: TakesDeps): TakesService {
       return dtoOf(trx, gymId, id);
     });
 
-  const tellPain = async (trx: Transaction, take: TakeRow, now: Date) => {
-    if (!take.pain) return;
-    const words = await wordsFor(trx, take);
-    await notify(
-      trx,
-      {
-        gymId: take.gymId,
-        userIds: (await staffOf(trx, take.gymId)).map((coach) => coach.id),
-        kind: 'pain',
-        title: `${words.member} says that something hurts`,
-        body: `${take.pain.where}, ${take.pain.level} of 10. ${words.lift}, take ${take.number}.`,
-        link: `/board/${take.id}`,
-      },
-      now,
-    );
-  };
-
-  const mustBePlayable = async (trx: Transaction, take: TakeRow) => {
-    const clips = await clipsOfTakes(trx, take.gymId, [take.id]);
-    const missing = take.views.filter((view) => !clips.some((clip) => clip.view === view));
-    if (missing.length > 0) {
-      throw refused(
-        'clips-missing',
-        `Before you send the take, add ${viewWords(missing)}.`,
-        missing.map((view) => ({ path: view, message: `The ${view} clip is missing.` })),
-      );
-    }
-    const broken = clips.filter((clip) => clip.state === 'unplayable').map((clip) => clip.view);
-    if (broken.length > 0) {
-      throw refused(
-        'clips-unplayable',
-        `Before you send the take, send ${viewWords(broken)} again: it cannot be played.`,
-        broken.map((view) => ({ path: view, message: `The ${view} clip cannot be played.` })),
-      );
-    }
-  };
-
   return {
     async create(actor, assignmentId, words) {
       try {
@@ -216,33 +165,7 @@ export function createTakes(platform: Platform, deps: TakesDeps): TakesService {
         await repository.updateWords(trx, actor.gymId, takeId, wordsOf(words));
       }),
 
-    submit: (actor, takeId) =>
-      changeOwn(actor, takeId, async (trx, take, now) => {
-        if (take.state === 'withdrawn') {
-          throw conflict('withdrawn', 'You took this take back. Begin a new one.');
-        }
-        if (take.state !== 'draft' && take.state !== 'unplayable') return;
-        if (await needsConsent(trx, take, now)) {
-          throw refused(
-            'guardian-consent',
-            'You are under 18, so a parent or guardian must agree before your clips can be seen. Ask your coach to record it, then send the take.',
-          );
-        }
-        await mustBePlayable(trx, take);
-        const gym = await gymOf(trx, actor.gymId);
-        const promiseEnd = coachingClock(gym.coachingHours, gym.timeZone).add(now, gym.promiseHours * HOUR);
-        const assignment = await assignmentOf(trx, actor.gymId, take.assignmentId);
-        await repository.setSubmitted(trx, actor.gymId, takeId, {
-          answerBy: answerBy(take.neededBy, promiseEnd),
-          promiseHours: gym.promiseHours,
-          atStake: assignment.reps === null ? null : assignment.reps * (assignment.rounds ?? 1),
-          queueRank: queueRank(take.pain !== null),
-          at: now,
-        });
-        await tellTake(trx, take, 'take.submitted', actor.userId, now);
-        await tellPain(trx, take, now);
-        await waitWhenReady(trx, await lockedTake(trx, actor.gymId, takeId), now);
-      }),
+    submit: (actor, takeId) => changeOwn(actor, takeId, submitTake),
 
     withdraw: (actor, takeId) =>
       changeOwn(actor, takeId, async (trx, take, now) => {
