@@ -10,18 +10,9 @@ import { newId } from '../../platform/ids';
 import type { Platform } from '../../platform/platform';
 import { liftsByIds } from '../lifts';
 import { mails, notify, sendMailLater } from '../notices';
-import { names, staffOf } from '../people';
+import { contactOf, names, staffOf } from '../people';
 import { heldTake } from '../queue';
-import {
-  loadVisible,
-  lockedTake,
-  mayBeSeen,
-  memberFacts,
-  setAnswered,
-  tellTake,
-  wordsFor,
-  type TakeRow,
-} from '../takes';
+import { loadVisible, lockedTake, mayBeSeen, setAnswered, tellTake, wordsFor, type TakeRow } from '../takes';
 import { replyDto } from './answer-dtos';
 import { insertAnswer, insertReply } from './answers-repository';
 import { commentsOf, deleteDraft } from './board-repository';
@@ -79,8 +70,8 @@ export function createAnswersService(platform: Platform, deps: AnswersDeps): Ans
       topCue,
       link: `${config.publicUrl}${link}`,
     });
-    const email = (await memberFacts(trx, take.gymId, take.memberId, now))?.email;
-    if (email) await sendMailLater(trx, email, mail, now);
+    const contact = await contactOf(trx, take.gymId, take.memberId);
+    if (contact) await sendMailLater(trx, contact.email, mail, now);
   };
 
   /** A member's words reach the coach who answered, or all coaches once that one has left; a coach's the member. */

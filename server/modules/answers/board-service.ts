@@ -10,17 +10,9 @@ import { newId } from '../../platform/ids';
 import type { Platform } from '../../platform/platform';
 import { assignmentsByIds } from '../assignments';
 import { liftsByIds } from '../lifts';
-import { names } from '../people';
+import { findUser, names } from '../people';
 import { heldTake } from '../queue';
-import {
-  clipsOfTakes,
-  handedInTakes,
-  loadVisible,
-  mayBeSeen,
-  memberFacts,
-  takeDtos,
-  type TakeRow,
-} from '../takes';
+import { clipsOfTakes, handedInTakes, loadVisible, mayBeSeen, takeDtos, type TakeRow } from '../takes';
 import { answersOf, commentDto, measureDto, notesOn, repMarksDtos, type RepMarksDto } from './answer-dtos';
 import * as repository from './board-repository';
 
@@ -136,11 +128,11 @@ export function createBoard(platform: Platform): BoardService {
         .filter((row) => row.id !== takeId && row.createdAt < take.createdAt)
         .reverse()
         .slice(0, EARLIER_TAKES);
-      const [[dto, ...earlierDtos], lifts, assignments, facts, notes, draft, answers] = await Promise.all([
+      const [[dto, ...earlierDtos], lifts, assignments, member, notes, draft, answers] = await Promise.all([
         takeDtos(database, gymId, [take, ...earlier], now),
         liftsByIds(database, gymId, [take.liftId]),
         assignmentsByIds(database, gymId, [take.assignmentId]),
-        memberFacts(database, gymId, take.memberId, now),
+        findUser(database, gymId, take.memberId, now),
         notesOn(database, gymId, [takeId]),
         repository.findDraft(database, gymId, takeId),
         answersOf(
@@ -154,7 +146,7 @@ export function createBoard(platform: Platform): BoardService {
       if (!dto || !lift || !assignment) throw notFound('That take');
       return {
         take: dto,
-        member: { ...dto.member, kit: facts?.kit ?? null },
+        member: { ...dto.member, kit: member?.kit ?? null },
         lift,
         assignment,
         clips: dto.clips,

@@ -1,5 +1,4 @@
 export { clipDto } from './clip-dto';
-export { memberFacts } from './member-query';
 export { clipsOfTakes, type ClipRow } from './take-clips-repository';
 export { takeDtos, takeDtosByIds } from './take-dtos';
 export { clipUnplayable, clipsReady, lockedTake, tellTake, wordsFor } from './take-flow';

@@ -1,7 +1,7 @@
 import type { Database, Transaction } from '../../platform/database';
 import { forbidden, notFound } from '../../platform/errors';
 import type { Actor } from '../../platform/http/actor';
-import { memberFacts } from './member-query';
+import { findUser } from '../people';
 import { takeOf } from './take-flow';
 import type { TakeRow } from './take-row';
 
@@ -13,7 +13,7 @@ export async function needsConsent(
   take: Pick<TakeRow, 'gymId' | 'memberId'>,
   now: Date,
 ): Promise<boolean> {
-  return (await memberFacts(db, take.gymId, take.memberId, now))?.needsConsent ?? false;
+  return (await findUser(db, take.gymId, take.memberId, now))?.needsGuardianConsent ?? false;
 }
 
 /**
