@@ -58,12 +58,35 @@ const DECODERS = [
   'libopencore_amrwb',
 ];
 
-/** What ffmpeg and ffprobe are told before every upload: one local file, known kinds, bounded size. */
-export function inputGuards(limits: MediaLimits): string[] {
+/**
+ * Decoders of streams that are never shown but that ffprobe opens all the same: subtitles, cover pictures and
+ * soundtracks that the proxy does without.
+ */
+const LUGGAGE_DECODERS = [
+  'mov_text',
+  'srt',
+  'subrip',
+  'ssa',
+  'ass',
+  'webvtt',
+  'text',
+  'png',
+  'ac3',
+  'eac3',
+  'flac',
+];
+
+/** What ffprobe is told before every upload; ffmpeg's list of decoders is narrower, for it opens only what it shows. */
+export function probeGuards(limits: MediaLimits): string[] {
+  return inputGuards(limits, [...DECODERS, ...LUGGAGE_DECODERS]);
+}
+
+/** What ffmpeg is told before every upload: one local file, known kinds, bounded size. */
+export function inputGuards(limits: MediaLimits, decoders: readonly string[] = DECODERS): string[] {
   return [
     ...['-protocol_whitelist', 'file'],
     ...['-format_whitelist', ALLOWED_FORMATS.join(',')],
-    ...['-codec_whitelist', DECODERS.join(',')],
+    ...['-codec_whitelist', decoders.join(',')],
     ...['-max_streams', String(limits.maxStreams)],
     ...['-max_pixels', String(maxPixels(limits))],
     ...['-probesize', '20M', '-analyzeduration', '10M'],

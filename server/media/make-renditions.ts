@@ -6,7 +6,7 @@ import { makeJobDirectory, SOURCE_NAME } from './job-directory';
 import { DEFAULT_LIMITS, type MediaLimits, renditionCaps } from './limits';
 import { planRenditions, type RenditionPlan, type Size, THUMBNAIL_COUNT, type Trim } from './plan';
 import { CAP_EXIT_CODES, probeSource, reasonFromComplaints } from './probe';
-import { parseHeader, parsePackets } from './probe-output';
+import { parseHeader } from './probe-output';
 import { type Rational, toNumber } from './rational';
 import { UnplayableError } from './reasons';
 import { runFfmpeg, runFfprobe } from './run';
@@ -81,7 +81,7 @@ export async function makeRenditions(request: RenditionRequest): Promise<Renditi
     const plan = planRenditions(facts, shortSide, trim);
     checkTrim(plan, limits);
     await transcode(directory, facts, plan, { ...request, limits, shortSide });
-    const proxy = await checkProxy(directory, facts, plan, signal);
+    const proxy = await checkProxy(directory, plan, signal);
     const stills = await collectStills(directory, plan);
     request.onProgress?.(100);
     return { facts, proxy, ...stills };
@@ -95,8 +95,8 @@ export async function makeRenditions(request: RenditionRequest): Promise<Renditi
 
 function checkTrim({ proxy }: RenditionPlan, limits: MediaLimits): void {
   const durationMs = (1000 * proxy.frames) / toNumber(proxy.fps);
-  // A slow-motion source may have enough pictures while its proxy, at a quarter of the rate, has fewer than the stills.
-  if (durationMs < limits.minDurationMs || proxy.frames < limits.minFrames) {
+  // Written so that a trim that is not a number is refused too. A slow-motion source may have enough pictures while its proxy, at a quarter of the rate, has fewer than the stills.
+  if (!(durationMs >= limits.minDurationMs && proxy.frames >= limits.minFrames)) {
     throw new UnplayableError('bad-trim', `${proxy.frames} pictures, ${durationMs} ms left`);
   }
 }
@@ -141,52 +141,41 @@ function framesUntilEnd(facts: SourceFacts, { firstFrame, proxy }: RenditionPlan
 
 async function checkProxy(
   directory: string,
-  facts: SourceFacts,
   plan: RenditionPlan,
   signal?: AbortSignal,
 ): Promise<Renditions['proxy']> {
-  const ask = (entries: string[]) =>
-    runFfprobe({
-      directory,
-      signal,
-      args: ['-v', 'error', '-protocol_whitelist', 'file', ...entries, 'file:proxy.mp4'],
-    });
-  const header = parseHeader((await ask(['-of', 'json', '-show_format', '-show_streams'])).stdout);
-  const packets = parsePackets(
-    (
-      await ask([
-        '-select_streams',
-        'v',
-        '-show_entries',
-        'packet=pts_time,dts_time,duration_time,flags',
-        '-of',
-        'csv=p=0',
-      ])
-    ).stdout,
-  );
-  const stream = header?.streams.find((s) => s.codec_type === 'video');
+  const { stdout } = await runFfprobe({
+    directory,
+    signal,
+    args: [
+      ...['-v', 'error', '-protocol_whitelist', 'file', '-of', 'json', '-show_format', '-show_streams'],
+      ...['-show_entries', 'packet=codec_type,pts_time,flags', 'file:proxy.mp4'],
+    ],
+  });
+  const report = parseHeader(stdout);
+  const stream = report?.streams.find((s) => s.codec_type === 'video');
+  const pictures = report?.packets.filter((packet) => packet.codec_type === 'video') ?? [];
   const { width, height, fps, frames } = plan.proxy;
-  const found = `${stream?.codec_name} ${stream?.width}x${stream?.height} ${stream?.pix_fmt}, ${packets.length} pictures from ${packets[0]?.timeS}`;
-  if (packets.length < DECODED_SHARE * frames) {
-    throw new UnplayableError('damaged', `${packets.length} of ${frames} pictures came out`);
+  if (pictures.length < DECODED_SHARE * frames) {
+    throw new UnplayableError('damaged', `${pictures.length} of ${frames} pictures came out`);
   }
-  const sound = packets.every((packet, n) => n % MAX_GROUP_OF_PICTURES !== 0 || packet.isKey);
-  if (
-    stream?.codec_name !== 'h264' ||
-    stream.width !== width ||
-    stream.height !== height ||
-    stream.pix_fmt !== 'yuv420p' ||
-    packets[0]?.timeS !== 0 ||
-    !sound
-  ) {
-    throw new Error(`the proxy is not what was asked for: ${found}`);
+  const asAsked =
+    stream?.codec_name === 'h264' &&
+    stream.pix_fmt === 'yuv420p' &&
+    stream.width === width &&
+    stream.height === height &&
+    pictures[0]?.pts_time === 0 &&
+    pictures.every((picture, n) => n % MAX_GROUP_OF_PICTURES !== 0 || picture.flags.startsWith('K'));
+  if (!asAsked) {
+    const found = `${stream?.codec_name} ${stream?.width}x${stream?.height} ${stream?.pix_fmt}`;
+    throw new Error(`the proxy is not what was asked for: ${found}, from ${pictures[0]?.pts_time} s`);
   }
   const path = join(directory, 'proxy.mp4');
   return {
-    ...{ path, width, height, fps, frames: packets.length },
-    durationMs: (1000 * packets.length) / toNumber(fps),
+    ...{ path, width, height, fps, frames: pictures.length },
+    durationMs: (1000 * pictures.length) / toNumber(fps),
     sizeBytes: (await stat(path)).size,
-    hasAudio: header?.streams.some((s) => s.codec_type === 'audio') ?? false,
+    hasAudio: report?.streams.some((s) => s.codec_type === 'audio') ?? false,
     sourceStartMs: (1000 * plan.firstFrame) / toNumber(fps),
   };
 }

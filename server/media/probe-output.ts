@@ -1,7 +1,7 @@
 import { z } from 'zod';
 
 /**
- * What is read of ffprobe's JSON (`-show_format -show_streams`, ffmpeg 5.1). Everything in it may come from a
+ * What is read of ffprobe's JSON (`-show_format -show_streams`, perhaps `-show_packets`; ffmpeg 5.1). Everything in it may come from a
  * hostile file, so it is parsed like a request's body.
  */
 const streamSchema = z.object({
@@ -35,6 +35,16 @@ const headerSchema = z.object({
       tags: z.record(z.string(), z.string()).optional(),
     })
     .default({}),
+  packets: z
+    .array(
+      z.object({
+        codec_type: z.string().optional(),
+        pts_time: z.coerce.number().optional(),
+        flags: z.string(),
+        side_data_list: z.array(z.object({ side_data_type: z.string().optional() })).optional(),
+      }),
+    )
+    .default([]),
 });
 
 /** One stream of a file as ffprobe describes it. */
@@ -57,7 +67,6 @@ export function parseHeader(json: string): ProbedHeader | null {
 export interface Packet {
   timeS: number;
   durationS: number | null;
-  isKey: boolean;
 }
 
 /**
@@ -70,9 +79,7 @@ export function parsePackets(csv: string): Packet[] {
     const timeS = Number.parseFloat(pts === 'N/A' ? dts : pts);
     if (!Number.isFinite(timeS) || flags.includes('D')) return [];
     const durationS = Number.parseFloat(duration);
-    return [
-      { timeS, durationS: Number.isFinite(durationS) ? durationS : null, isKey: flags.startsWith('K') },
-    ];
+    return [{ timeS, durationS: Number.isFinite(durationS) ? durationS : null }];
   });
 }
 

@@ -1,6 +1,6 @@
 import { open } from 'node:fs/promises';
 import { join } from 'node:path';
-import { AUDIO_CODECS, inputGuards, VIDEO_CODECS } from './build-args';
+import { AUDIO_CODECS, probeGuards, VIDEO_CODECS } from './build-args';
 import { type SourceFacts } from './facts';
 import { measureTiming } from './frame-rate';
 import { SOURCE_NAME } from './job-directory';
@@ -108,6 +108,7 @@ async function checkFirstBytes(path: string): Promise<Pick<SourceFacts, 'contain
 const COMPLAINTS: readonly (readonly [RegExp, UnplayableReason])[] = [
   [/exceeds max_streams/i, 'too-many-streams'],
   [/exceeds specified max pixel count|Picture size \d+x\d+ is invalid/i, 'too-big-picture'],
+  [/not on whitelist/i, 'unsupported-codec'],
   [/Cannot allocate memory/i, 'too-heavy'],
 ];
 
@@ -131,18 +132,22 @@ async function readHeader(
     args: [
       '-v',
       'error',
-      ...inputGuards(limits),
+      ...probeGuards(limits),
       '-of',
       'json',
       '-show_format',
       '-show_streams',
+      '-show_packets',
+      '-read_intervals',
+      '%+#16',
       `file:${SOURCE_NAME}`,
     ],
   });
   const detail = stderr.slice(-5).join(' | ');
   refuseIf(CAP_EXIT_CODES.includes(exitCode), 'too-heavy', detail);
   const complaint = reasonFromComplaints(stderr);
-  if (complaint) throw new UnplayableError(complaint, detail);
+  if (complaint && (exitCode !== 0 || complaint === 'too-big-picture'))
+    throw new UnplayableError(complaint, detail);
   if (exitCode > 128) throw new Error(`ffprobe was ended from outside (${exitCode}): ${detail}`);
   const header = exitCode === 0 ? parseHeader(stdout) : null;
   if (!header) throw new UnplayableError('damaged', `ffprobe exited with ${exitCode}: ${detail}`);
@@ -151,6 +156,7 @@ async function readHeader(
 
 function chooseVideo(header: ProbedHeader, limits: MediaLimits): ProbedStream {
   refuseIf(header.streams.length > limits.maxStreams, 'too-many-streams', `${header.streams.length} streams`);
+  refuseIf(header.streams.length === 0, 'damaged', 'no streams');
   // A cover picture is stored as a video stream of one picture; it is not what was filmed.
   const pictures = header.streams.filter(
     (s) => s.codec_type === 'video' && s.disposition?.attached_pic !== 1,
@@ -158,10 +164,13 @@ function chooseVideo(header: ProbedHeader, limits: MediaLimits): ProbedStream {
   const [first] = pictures;
   if (!first)
     throw new UnplayableError('no-picture', `streams: ${header.streams.map((s) => s.codec_type).join(', ')}`);
+  // The demuxer hides that a track's samples are enciphered behind the codec inside; only the packets tell.
   refuseIf(
-    pictures.every((s) => ['encv', 'drmi'].includes(s.codec_tag_string ?? '')),
+    header.packets.some((packet) =>
+      packet.side_data_list?.some((data) => data.side_data_type === 'Encryption info'),
+    ),
     'encrypted',
-    `tag ${first.codec_tag_string}`,
+    'packets carry encryption information',
   );
   const playable = pictures.find((s) => (VIDEO_CODECS as readonly string[]).includes(s.codec_name ?? ''));
   if (!playable)
@@ -172,10 +181,7 @@ function chooseVideo(header: ProbedHeader, limits: MediaLimits): ProbedStream {
 function chooseAudio(header: ProbedHeader): ProbedStream | undefined {
   // Phones may record a second, spatial track that no decoder here reads; the first plain one is the one to hear.
   return header.streams.find(
-    (s) =>
-      s.codec_type === 'audio' &&
-      s.codec_tag_string !== 'enca' &&
-      (AUDIO_CODECS as readonly string[]).includes(s.codec_name ?? ''),
+    (s) => s.codec_type === 'audio' && (AUDIO_CODECS as readonly string[]).includes(s.codec_name ?? ''),
   );
 }
 
@@ -228,7 +234,7 @@ async function readPackets(
     directory,
     signal,
     args: [
-      ...['-v', 'error', ...inputGuards(limits), '-select_streams', String(stream)],
+      ...['-v', 'error', ...probeGuards(limits), '-select_streams', String(stream)],
       ...['-read_intervals', `%+#${most}`, '-show_entries', 'packet=pts_time,dts_time,duration_time,flags'],
       ...['-of', 'csv=p=0', `file:${SOURCE_NAME}`],
     ],
