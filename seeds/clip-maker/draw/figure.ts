@@ -27,17 +27,19 @@ const HIPS: Slice[] = [
   [-0.24, 0.02, 0.02, 0.02],
   [-0.2, 0.052, 0.04, 0.046],
   [-0.12, 0.085, 0.053, 0.068],
-  [-0.02, 0.1, 0.06, 0.074],
-  [0.09, 0.097, 0.061, 0.067],
-  [0.2, 0.088, 0.059, 0.056],
-  [0.26, 0.08, 0.052, 0.05],
+  [-0.02, 0.097, 0.059, 0.07],
+  [0.05, 0.095, 0.058, 0.064],
+  [0.1, 0.086, 0.05, 0.052],
+  [0.2, 0.07, 0.042, 0.04],
+  [0.26, 0.05, 0.03, 0.03],
 ];
 
 const SHIRT: Slice[] = [
-  [0.055, 0.094, 0.056, 0.064],
-  [0.06, 0.1045, 0.067, 0.0745],
-  [0.14, 0.1, 0.066, 0.067],
-  [0.24, 0.0935, 0.063, 0.058],
+  [-0.05, 0.092, 0.054, 0.064],
+  [-0.045, 0.1055, 0.0675, 0.0775],
+  [0.05, 0.1035, 0.0675, 0.073],
+  [0.14, 0.099, 0.066, 0.066],
+  [0.24, 0.0935, 0.063, 0.0585],
   [0.36, 0.0885, 0.061, 0.053],
   [0.48, 0.0905, 0.063, 0.055],
   [0.6, 0.0965, 0.067, 0.06],
@@ -55,7 +57,7 @@ function drawTrunk(mesh: Mesh, body: Body, skeleton: Skeleton, wear: Wardrobe): 
   const ring = ([s, side, front, back]: Slice, m: Material, hips: boolean): Ring => {
     const { at, front: u } = trunkAt(skeleton, body.trunk, s);
     const chest = Math.max(0, Math.min(1, (s - 0.45) / 0.25));
-    const girth = hips ? body.hips : body.waist + (body.chest - body.waist) * chest;
+    const girth = hips ? Math.min(body.hips, (body.hips + body.waist) / 2) : body.waist + (body.chest - body.waist) * chest;
     const low = Math.max(0, Math.min(1, (0.3 - s) / 0.25));
     const wide = hips ? body.hips : (s > 0.8 ? (body.shoulders + body.chest) / 2 : girth) * (1 - low) + body.hips * low;
     const neck = Math.max(0, Math.min(1, (s - 0.95) / 0.1));
@@ -209,9 +211,9 @@ function drawLeg(mesh: Mesh, body: Body, skeleton: Skeleton, side: Side, look: L
   const hip = j[`hip${n}`];
   const { pelvisFront, pelvisUp } = skeleton.torso;
   // The seat fills the back of the hip whatever the thigh does.
-  const seat = along(along(along(hip, pelvisFront, -0.026 * h), pelvisUp, -0.022 * h), skeleton.right, -0.006 * h * sign(side));
+  const seat = along(along(along(hip, pelvisFront, -0.017 * h), pelvisUp, -0.02 * h), skeleton.right, -0.006 * h * sign(side));
   const fat = h * (0.5 * body.hips + 0.5 * body.limbs);
-  mesh.ellipsoid(seat, [pelvisFront, pelvisUp, skeleton.right], [0.054 * fat, 0.058 * fat, 0.049 * fat], wear.legs, PART.pelvis, 8, 14);
+  mesh.ellipsoid(seat, [pelvisFront, pelvisUp, skeleton.right], [0.053 * fat, 0.06 * fat, 0.049 * fat], wear.legs, PART.pelvis, 8, 14);
   if (leggings) return;
   const shell = shellOf(rings, LEG, 0.66, (s) => (0.004 + 0.009 * Math.max(0, s)) * h, wear.legs, wear.legsDark);
   mesh.tube(shell, PART[`thigh${n}`], 22, (r, angle) => {

@@ -102,24 +102,32 @@ export class Mesh {
     });
     const at = (r: number, k: number): V3 => points[r * around + ((k + around) % around)] as V3;
     const first = this.vertices;
+    const raw: V3[] = [];
+    // All faces of a tube turn the same way; the sum says whether that is outward.
+    let outwardness = 0;
+    for (let r = 0; r < rows; r++) {
+      const ring = rings[r] as Ring;
+      for (let k = 0; k < around; k++) {
+        const turning = sub(at(r, k + 1), at(r, k - 1));
+        const rising = sub(at(Math.min(rows - 1, r + 1), k), at(Math.max(0, r - 1), k));
+        const n = cross(turning, rising);
+        outwardness += dot(n, sub(at(r, k), ring.at));
+        raw.push(n);
+      }
+    }
+    const way = outwardness < 0 ? -1 : 1;
     for (let r = 0; r < rows; r++) {
       const ring = rings[r] as Ring;
       const before = rings[Math.max(0, r - 1)] as Ring;
       const after = rings[Math.min(rows - 1, r + 1)] as Ring;
       const axis = unit(sub(after.at, before.at), cross(ring.u, ring.v));
+      const near = r === 0 ? after : before;
+      const pointed = (r === 0 || r === rows - 1) && Math.max(ring.front, ring.side) < 0.3 * Math.max(near.front, near.side);
       for (let k = 0; k < around; k++) {
-        const p = at(r, k);
-        const turning = sub(at(r, k + 1), at(r, k - 1));
-        const rising = sub(at(Math.min(rows - 1, r + 1), k), at(Math.max(0, r - 1), k));
-        let n = unit(cross(turning, rising), [0, 0, 0]);
-        const outward = sub(p, ring.at);
-        if (n[0] === 0 && n[1] === 0 && n[2] === 0) n = r < rows / 2 ? [-axis[0], -axis[1], -axis[2]] : axis;
-        else {
-          const end = r === 0 ? -1 : r === rows - 1 ? 1 : 0;
-          const facing = dot(n, outward) + 0.3 * end * dot(n, axis) * Math.max(1e-4, Math.abs(dot(outward, outward)) ** 0.5);
-          if (facing < 0) n = [-n[0], -n[1], -n[2]];
-        }
-        this.vertex(p, n, materials[r * around + k] ?? ring.material, part);
+        const n = raw[r * around + k] as V3;
+        const end: V3 = r < rows / 2 ? [-axis[0], -axis[1], -axis[2]] : axis;
+        const normal = pointed ? end : unit([n[0] * way, n[1] * way, n[2] * way], end);
+        this.vertex(at(r, k), normal, materials[r * around + k] ?? ring.material, part);
       }
     }
     for (let r = 0; r + 1 < rows; r++) {

@@ -1,4 +1,4 @@
-import { createCanvas } from '@napi-rs/canvas';
+import { type Canvas, createCanvas } from '@napi-rs/canvas';
 import { type Camera, type Shake, project } from '../camera';
 import { seeded } from '../random';
 import { type ClipPlan, type Instant, cameraOf, instantAt, shakeAt, timeOfFrame } from '../set';
@@ -34,7 +34,7 @@ export class Painter {
   private readonly room: { rgba: Uint8ClampedArray; width: number; height: number };
   private readonly margin: number;
   private readonly noise: Int8Array;
-  private readonly shaken: { canvas: ReturnType<typeof createCanvas>; still: ReturnType<typeof createCanvas> } | undefined;
+  private readonly shaken: { canvas: Canvas; still: Canvas } | undefined;
 
   constructor(private readonly plan: ClipPlan) {
     const { width, height } = plan;
