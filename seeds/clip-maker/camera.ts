@@ -37,7 +37,13 @@ export function project(camera: Camera, point: V3, shake: Shake = STILL): Seen {
   const ray = sub(point, camera.eye);
   const depthM = dot(ray, camera.ahead);
   const f = camera.focalPx / depthM;
-  return shaken(camera, camera.centreX + dot(ray, camera.right) * f, camera.centreY - dot(ray, camera.up) * f, depthM, shake);
+  return shaken(
+    camera,
+    camera.centreX + dot(ray, camera.right) * f,
+    camera.centreY - dot(ray, camera.up) * f,
+    depthM,
+    shake,
+  );
 }
 
 function shaken(camera: Camera, x: number, y: number, depthM: number, { dx, dy, roll }: Shake): Seen {
@@ -109,7 +115,10 @@ export function framed(
   const lowest = bottom - height / 2;
   const highest = top - height / 2;
   const span = (lowest - highest) * zoom;
-  const feetAt = Math.min(height * floorShare, span < height * 0.45 ? height * (portrait ? 0.7 : 0.76) : height);
+  const feetAt = Math.min(
+    height * floorShare,
+    span < height * 0.45 ? height * (portrait ? 0.7 : 0.76) : height,
+  );
   return { ...camera, focalPx, centreX: width / 2 - midX * zoom, centreY: feetAt - lowest * zoom };
 }
 
@@ -117,7 +126,10 @@ export function framed(
 export function floorAt(camera: Camera, x: number, y: number): V3 | undefined {
   const ray = add(
     camera.ahead,
-    add(scale(camera.right, (x - camera.centreX) / camera.focalPx), scale(camera.up, (camera.centreY - y) / camera.focalPx)),
+    add(
+      scale(camera.right, (x - camera.centreX) / camera.focalPx),
+      scale(camera.up, (camera.centreY - y) / camera.focalPx),
+    ),
   );
   if (ray[1] > -1e-6) return undefined;
   return along(camera.eye, ray, -camera.eye[1] / ray[1]);

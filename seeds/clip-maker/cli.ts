@@ -32,7 +32,8 @@ const { values } = parseArgs({
   },
 });
 
-const number = (text: string | undefined): number | undefined => (text === undefined ? undefined : Number(text));
+const number = (text: string | undefined): number | undefined =>
+  text === undefined ? undefined : Number(text);
 
 function optionsFrom(lift: LiftId, view: View): ClipOptions {
   const [downS, pauseBottomS, upS, pauseTopS] = values.tempo?.split(',').map(Number) ?? [];
@@ -69,5 +70,7 @@ if (!lift || !view || !values.out) {
 } else {
   const truth = await makeClip(optionsFrom(lift, view), values.out);
   if (values.truth) await writeFile(values.truth, `${JSON.stringify(truth)}\n`);
-  console.log(`${values.out}: ${truth.frameCount} frames, ${truth.reps} reps of ${truth.lift}, ${truth.view}`);
+  console.log(
+    `${values.out}: ${truth.frameCount} frames, ${truth.reps} reps of ${truth.lift}, ${truth.view}`,
+  );
 }

@@ -15,17 +15,29 @@ describe('the truth of a clip', () => {
     expect(JSON.stringify(clipTruth({ ...small, lift, seed: 6 }))).not.toBe(one);
   });
 
-  it.each(FAULTS.map((fault) => [fault.lift, fault.id, fault] as const))('shows %s, %s: 10° or more at full dose, nothing at none', (lift, id, fault) => {
-    const without = clipTruth({ ...small, lift });
-    const none = clipTruth({ ...small, lift, faults: { [id]: 0 } });
-    const full = clipTruth({ ...small, lift, faults: { [id]: 1 } });
-    const moved = full.frames.map((frame, i) => frame.angles[fault.angle] - (without.frames[i]?.angles[fault.angle] ?? 0));
-    const way = fault.change === 'increases' ? 1 : -1;
-    expect(Math.max(...moved.map((degrees) => degrees * way))).toBeGreaterThanOrEqual(10);
-    expect(none.frames.map((frame) => frame.angles)).toEqual(without.frames.map((frame) => frame.angles));
-  });
+  it.each(FAULTS.map((fault) => [fault.lift, fault.id, fault] as const))(
+    'shows %s, %s: 10° or more at full dose, nothing at none',
+    (lift, id, fault) => {
+      const without = clipTruth({ ...small, lift });
+      const none = clipTruth({ ...small, lift, faults: { [id]: 0 } });
+      const full = clipTruth({ ...small, lift, faults: { [id]: 1 } });
+      const moved = full.frames.map(
+        (frame, i) => frame.angles[fault.angle] - (without.frames[i]?.angles[fault.angle] ?? 0),
+      );
+      const way = fault.change === 'increases' ? 1 : -1;
+      expect(Math.max(...moved.map((degrees) => degrees * way))).toBeGreaterThanOrEqual(10);
+      expect(none.frames.map((frame) => frame.angles)).toEqual(without.frames.map((frame) => frame.angles));
+    },
+  );
 
-  it.each(['swing', 'goblet-squat', 'split-squat-hold', 'bent-over-row', 'hang-clean', 'push-press'] as const)(
+  it.each([
+    'swing',
+    'goblet-squat',
+    'split-squat-hold',
+    'bent-over-row',
+    'hang-clean',
+    'push-press',
+  ] as const)(
     'keeps the ball of each foot where it stands (%s): it slips less than 1 % of height',
     (lift) => {
       const truth = clipTruth({ ...small, lift });
@@ -64,7 +76,9 @@ describe('the truth of a clip', () => {
   });
 
   it('refuses what it cannot draw, and says why', () => {
-    expect(() => clipTruth({ ...small, lift: 'swing', faults: { 'knees-fall-in': 1 } })).toThrow(/no fault "knees-fall-in"/);
+    expect(() => clipTruth({ ...small, lift: 'swing', faults: { 'knees-fall-in': 1 } })).toThrow(
+      /no fault "knees-fall-in"/,
+    );
     expect(() => clipTruth({ ...small, lift: 'swing', depth: 4 })).toThrow(/Depth is 4/);
   });
 });

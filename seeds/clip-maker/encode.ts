@@ -16,22 +16,55 @@ export interface Pictures {
 const FFMPEG = '/usr/bin/ffmpeg';
 
 /** ffmpeg's arguments for a clip. */
-export function encodeArgs({ width, height, fps, frameCount }: Omit<Pictures, 'frame'>, file: FileOptions, outPath: string): string[] {
+export function encodeArgs(
+  { width, height, fps, frameCount }: Omit<Pictures, 'frame'>,
+  file: FileOptions,
+  outPath: string,
+): string[] {
   const seconds = frameCount / fps;
   const sound =
     file.audio === 'none'
       ? []
-      : ['-f', 'lavfi', '-t', seconds.toFixed(3), '-i', file.audio === 'tone' ? 'sine=frequency=440:sample_rate=48000' : 'anullsrc=r=48000:cl=stereo'];
+      : [
+          '-f',
+          'lavfi',
+          '-t',
+          seconds.toFixed(3),
+          '-i',
+          file.audio === 'tone' ? 'sine=frequency=440:sample_rate=48000' : 'anullsrc=r=48000:cl=stereo',
+        ];
   const video =
     file.codec === 'hevc'
-      ? ['-c:v', 'libx265', '-preset', 'ultrafast', '-crf', '27', '-tag:v', 'hvc1', '-x265-params', 'log-level=error']
+      ? [
+          '-c:v',
+          'libx265',
+          '-preset',
+          'ultrafast',
+          '-crf',
+          '27',
+          '-tag:v',
+          'hvc1',
+          '-x265-params',
+          'log-level=error',
+        ]
       : ['-c:v', 'libx264', '-preset', 'veryfast', '-crf', '22'];
   const rotated = file.storedRotated ? ['-vf', 'transpose=cclock', '-metadata:s:v:0', 'rotate=90'] : [];
   const place = file.location ? iso6709(file.location) : undefined;
   const tags = [
     ...(place ? ['-metadata', `location=${place}`] : []),
     ...(place && file.codec === 'hevc' ? ['-metadata', `com.apple.quicktime.location.ISO6709=${place}`] : []),
-    ...(file.device ? ['-metadata', `com.apple.quicktime.make=${file.device.make}`, '-metadata', `com.apple.quicktime.model=${file.device.model}`, '-metadata', `make=${file.device.make}`, '-metadata', `model=${file.device.model}`] : []),
+    ...(file.device
+      ? [
+          '-metadata',
+          `com.apple.quicktime.make=${file.device.make}`,
+          '-metadata',
+          `com.apple.quicktime.model=${file.device.model}`,
+          '-metadata',
+          `make=${file.device.make}`,
+          '-metadata',
+          `model=${file.device.model}`,
+        ]
+      : []),
   ];
   const keepTags = file.device || place ? '+faststart+use_metadata_tags' : '+faststart';
   return [
@@ -45,7 +78,10 @@ export function encodeArgs({ width, height, fps, frameCount }: Omit<Pictures, 'f
 }
 
 const iso6709 = ({ latitude, longitude }: { latitude: number; longitude: number }): string => {
-  const part = (value: number, digits: number): string => `${value < 0 ? '-' : '+'}${Math.abs(value).toFixed(4).padStart(digits + 5, '0')}`;
+  const part = (value: number, digits: number): string =>
+    `${value < 0 ? '-' : '+'}${Math.abs(value)
+      .toFixed(4)
+      .padStart(digits + 5, '0')}`;
   return `${part(latitude, 2)}${part(longitude, 3)}/`;
 };
 
@@ -71,7 +107,8 @@ export async function encode(pictures: Pictures, file: FileOptions, outPath: str
     }
     child.stdin.end();
     const [code] = await closed;
-    if (code !== 0 || broken) throw new Error(`ffmpeg could not write ${outPath}: ${said.trim() || String(broken ?? code)}`);
+    if (code !== 0 || broken)
+      throw new Error(`ffmpeg could not write ${outPath}: ${said.trim() || String(broken ?? code)}`);
     await rename(unfinished, outPath);
   } catch (error) {
     child.kill('SIGKILL');

@@ -13,7 +13,10 @@ export interface Fault {
   view: 'front' | 'side';
 }
 
-const of = (lift: LiftId, rows: readonly (readonly [string, string, AngleName, '+' | '-', 'front' | 'side'])[]): Fault[] =>
+const of = (
+  lift: LiftId,
+  rows: readonly (readonly [string, string, AngleName, '+' | '-', 'front' | 'side'])[],
+): Fault[] =>
   rows.map(([id, name, angle, change, view]) => ({
     id,
     lift,

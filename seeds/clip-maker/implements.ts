@@ -25,7 +25,13 @@ export const plateRadius = (kg: number): number => (kg > 60 ? 0.185 : kg > 35 ? 
 export function bellInBothHands({ joints }: Skeleton, hang: V3, kg: number): Implement {
   const grip = mix(joints.handLeft, joints.handRight, 0.5);
   const down = unit(hang, [0, -1, 0]);
-  return { kind: 'kettlebell', grip, at: along(grip, down, bellDrop(kg)), axis: squareTo(RIGHT, down), hang: down };
+  return {
+    kind: 'kettlebell',
+    grip,
+    at: along(grip, down, bellDrop(kg)),
+    axis: squareTo(RIGHT, down),
+    hang: down,
+  };
 }
 
 /** A dumbbell in both hands, upright, held under its upper head. */
@@ -36,7 +42,14 @@ export function dumbbellInBothHands({ joints }: Skeleton, hang: V3): Implement {
 }
 
 /** A bell or dumbbell in one hand; it hangs from the grip by gravity or lies along `hang`. */
-export function inOneHand(skeleton: Skeleton, side: Side, kind: 'kettlebell' | 'dumbbell', kg: number, axis: V3, hang: V3): Implement {
+export function inOneHand(
+  skeleton: Skeleton,
+  side: Side,
+  kind: 'kettlebell' | 'dumbbell',
+  kg: number,
+  axis: V3,
+  hang: V3,
+): Implement {
   const grip = skeleton.joints[side === 'left' ? 'handLeft' : 'handRight'];
   const down = unit(hang, scale(UP, -1));
   const at = kind === 'kettlebell' ? along(grip, down, bellDrop(kg)) : grip;

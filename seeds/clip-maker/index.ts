@@ -10,7 +10,17 @@ export { FAULTS, type Fault, faultsOf } from './faults';
 export { IMPLEMENT_KINDS, type ImplementKind } from './implements';
 export { LIFT_IDS, type LiftId } from './lift-ids';
 export { LIFTS } from './lifts';
-export { type ClipOptions, type FileOptions, HAIR_STYLES, type Look, OUTFITS, SCENES, SKIN_TONES, VIEWS, type View } from './options';
+export {
+  type ClipOptions,
+  type FileOptions,
+  HAIR_STYLES,
+  type Look,
+  OUTFITS,
+  SCENES,
+  SKIN_TONES,
+  VIEWS,
+  type View,
+} from './options';
 export { JOINT_NAMES, type JointName } from './skeleton';
 export type { Tempo } from './timeline';
 export { type ClipTruth, type FrameTruth, clipTruth } from './truth';
@@ -25,7 +35,13 @@ export async function makeClip(options: ClipOptions, outPath: string): Promise<C
   const plan = planOf(options);
   const painter = new Painter(plan);
   await encode(
-    { width: plan.width, height: plan.height, fps: plan.fps, frameCount: plan.frameCount, frame: (i) => painter.frame(i) },
+    {
+      width: plan.width,
+      height: plan.height,
+      fps: plan.fps,
+      frameCount: plan.frameCount,
+      frame: (i) => painter.frame(i),
+    },
     { ...PLAIN_FILE, ...options.file },
     outPath,
   );

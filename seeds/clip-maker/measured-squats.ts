@@ -6,7 +6,12 @@ import measured from './data/measured-squats.json';
  * one person's body-weight squats (source and licence stand in the data file). Rep numbers beyond the measured ones
  * start again. The ends are softened because the measured reps were cut out of a moving set.
  */
-export function measuredShare(rep: number, phase: 'down' | 'up', channel: 'knee' | 'lean', s: number): number {
+export function measuredShare(
+  rep: number,
+  phase: 'down' | 'up',
+  channel: 'knee' | 'lean',
+  s: number,
+): number {
   const curves = measured.reps[(rep - 1) % measured.reps.length];
   if (!curves) throw new Error(`No measured squat for rep ${rep}`);
   const shares = curves[`${phase}${channel === 'knee' ? 'Knee' : 'Lean'}`];

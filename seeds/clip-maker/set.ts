@@ -5,7 +5,16 @@ import { FAULTS } from './faults';
 import { IMPLEMENT_KINDS, type Implement, type ImplementKind, bellRadius } from './implements';
 import { LIFT_IDS } from './lift-ids';
 import { LIFTS, type LiftModel, type Moment } from './lifts';
-import { type ClipOptions, HAIR_STYLES, type Look, OUTFITS, SCENES, SKIN_TONES, type Scene, VIEWS } from './options';
+import {
+  type ClipOptions,
+  HAIR_STYLES,
+  type Look,
+  OUTFITS,
+  SCENES,
+  SKIN_TONES,
+  type Scene,
+  VIEWS,
+} from './options';
 import { seeded, wander } from './random';
 import { type Skeleton, solve } from './skeleton';
 import { type Tempo, type Timeline, phaseAt, timelineOf } from './timeline';
@@ -45,7 +54,8 @@ export interface Instant {
 const HAIR_COLOURS = ['#2a1d17', '#4a3021', '#6d4a2c', '#1b1a1c', '#8a6a42', '#7d7873'];
 
 function within(name: string, value: number, low: number, high: number): number {
-  if (!(value >= low && value <= high)) throw new RangeError(`${name} is ${value}; it must lie between ${low} and ${high}`);
+  if (!(value >= low && value <= high))
+    throw new RangeError(`${name} is ${value}; it must lie between ${low} and ${high}`);
   return value;
 }
 
@@ -59,7 +69,12 @@ function pick<T>(items: readonly T[], roll: number): T {
 export function lookOf(seed: number, given: Partial<Look> = {}): Look {
   const next = seeded(seed * 7 + 3);
   const build = pick(BUILD_IDS, next());
-  const hair = pick(build === 'slight' || build === 'compact' ? (['bun', 'tail', 'crop'] as const) : (['short', 'crop', 'shaved', 'curls'] as const), next());
+  const hair = pick(
+    build === 'slight' || build === 'compact'
+      ? (['bun', 'tail', 'crop'] as const)
+      : (['short', 'crop', 'shaved', 'curls'] as const),
+    next(),
+  );
   return {
     build,
     hair,
@@ -76,10 +91,12 @@ export function lookOf(seed: number, given: Partial<Look> = {}): Look {
 export function planOf(options: ClipOptions): ClipPlan {
   const lift = LIFTS[options.lift];
   if (!lift) throw new Error(`Unknown lift "${String(options.lift)}"; known are ${LIFT_IDS.join(', ')}`);
-  if (!VIEWS.includes(options.view)) throw new Error(`Unknown view "${String(options.view)}"; known are front and side`);
+  if (!VIEWS.includes(options.view))
+    throw new Error(`Unknown view "${String(options.view)}"; known are front and side`);
   const faults = options.faults ?? {};
   for (const [id, dose] of Object.entries(faults)) {
-    if (!FAULTS.some((fault) => fault.lift === lift.id && fault.id === id)) throw new Error(`${lift.name} has no fault "${id}"`);
+    if (!FAULTS.some((fault) => fault.lift === lift.id && fault.id === id))
+      throw new Error(`${lift.name} has no fault "${id}"`);
     within(`Dose of ${id}`, dose, 0, 1);
   }
   const implement = options.implement ?? lift.implement;
@@ -94,7 +111,8 @@ export function planOf(options: ClipOptions): ClipPlan {
   const portrait = (options.orientation ?? 'portrait') === 'portrait';
   const tempo = { ...lift.tempo, ...options.tempo };
   for (const [name, s] of Object.entries(tempo)) within(`Tempo ${name}`, s, 0, 60);
-  if (tempo.downS < 0.1 || tempo.upS < 0.1) throw new RangeError('Lowering and lifting take at least 0.1 s each');
+  if (tempo.downS < 0.1 || tempo.upS < 0.1)
+    throw new RangeError('Lowering and lifting take at least 0.1 s each');
   const reps = within('Reps', options.reps ?? lift.reps, 1, 50);
   const fps = within('Frame rate', options.fps ?? 30, 1, 240);
   const timeline = timelineOf(lift.first, reps, tempo, 450, lift.leadOutMs);
@@ -171,12 +189,14 @@ export function cameraOf(plan: ClipPlan): Camera {
   const h = plan.body.heightM;
   const put = (instant: Instant): void => {
     const j = instant.skeleton.joints;
-    for (const point of Object.values(j)) points.push(add(point, [0, 0.04, 0]), add(point, [0.06, -0.04, 0]), add(point, [-0.06, 0, 0]));
+    for (const point of Object.values(j))
+      points.push(add(point, [0, 0.04, 0]), add(point, [0.06, -0.04, 0]), add(point, [-0.06, 0, 0]));
     points.push(along(j.head, instant.skeleton.head.up, 0.09 * h));
     for (const item of instant.held) {
       const r = item.kind === 'kettlebell' ? bellRadius(plan.loadKg) : 0.1;
       points.push(add(item.at, [r, r, 0]), add(item.at, [-r, -r, 0]));
-      if (item.kind === 'barbell') points.push(along(item.at, item.axis, 0.66), along(item.at, item.axis, -0.66));
+      if (item.kind === 'barbell')
+        points.push(along(item.at, item.axis, 0.66), along(item.at, item.axis, -0.66));
     }
   };
   const steps = 24;
@@ -188,4 +208,5 @@ export function cameraOf(plan: ClipPlan): Camera {
 }
 
 /** The value of one angle over the whole clip, degrees. */
-export const curveOf = (instants: readonly Instant[], name: AngleName): number[] => instants.map(({ angles }) => angles[name]);
+export const curveOf = (instants: readonly Instant[], name: AngleName): number[] =>
+  instants.map(({ angles }) => angles[name]);

@@ -1,5 +1,24 @@
 import { type Body, MASS } from './anthropometry';
-import { FORWARD, RIGHT, UP, type V3, add, along, cross, distance, dot, length, mix, radians, sagittal, scale, squareTo, sub, turn, unit } from './vec';
+import {
+  FORWARD,
+  RIGHT,
+  UP,
+  type V3,
+  add,
+  along,
+  cross,
+  distance,
+  dot,
+  length,
+  mix,
+  radians,
+  sagittal,
+  scale,
+  squareTo,
+  sub,
+  turn,
+  unit,
+} from './vec';
 
 export const SIDES = ['left', 'right'] as const;
 export type Side = (typeof SIDES)[number];
@@ -103,7 +122,10 @@ export function bend(from: V3, to: V3, a: number, b: number, pole: V3): { middle
   const out = squareTo(pole, direction);
   const cos = (a * a + reach * reach - b * b) / (2 * a * reach);
   const sin = Math.sqrt(Math.max(0, 1 - cos * cos));
-  return { middle: add(along(from, direction, a * cos), scale(out, a * sin)), end: along(from, direction, reach) };
+  return {
+    middle: add(along(from, direction, a * cos), scale(out, a * sin)),
+    end: along(from, direction, reach),
+  };
 }
 
 /** Distance from hip to ankle at a knee flexion in degrees. */
@@ -138,7 +160,11 @@ function freeFoot(body: Body, ankle: V3, shankDirection: V3, front: V3, right: V
   return { heel, ankle, ball, toe: along(ball, forward, 0.3 * l), up, toeUp: up, forward };
 }
 
-function buildTorso(body: Body, pose: Pose, midHip: V3): { torso: Torso; spine: Skeleton['spine']; right: V3 } {
+function buildTorso(
+  body: Body,
+  pose: Pose,
+  midHip: V3,
+): { torso: Torso; spine: Skeleton['spine']; right: V3 } {
   const roll = (a: V3): V3 => turn(a, FORWARD, pose.sideLean ?? 0);
   const right = roll(RIGHT);
   const steps = 12;
@@ -223,11 +249,22 @@ function solveAt(body: Body, pose: Pose, midHip: V3): Skeleton {
       pole = leg.kneesUp ? UP : turn(FORWARD, UP, -sign(side) * (leg.foot.toeOut - leg.kneeIn));
       knee = bend(hip, foot.ankle, body.thigh, body.shank, pole).middle;
     } else {
-      const thighDirection = turn(turn(scale(torso.pelvisUp, -1), right, leg.hip), torso.pelvisFront, -leg.spread * sign(side));
+      const thighDirection = turn(
+        turn(scale(torso.pelvisUp, -1), right, leg.hip),
+        torso.pelvisFront,
+        -leg.spread * sign(side),
+      );
       const shankDirection = turn(thighDirection, right, -leg.knee);
       knee = along(hip, thighDirection, body.thigh);
       pole = torso.pelvisFront;
-      foot = freeFoot(body, along(knee, shankDirection, body.shank), shankDirection, torso.pelvisFront, right, leg.ankle);
+      foot = freeFoot(
+        body,
+        along(knee, shankDirection, body.shank),
+        shankDirection,
+        torso.pelvisFront,
+        right,
+        leg.ankle,
+      );
     }
     const arm = reached[side];
     const shoulder = torso.shoulder[side];

@@ -32,7 +32,13 @@ export interface Timeline {
 const LEAD_MS = 450;
 
 /** The phases of a whole set. `first` says whether a rep begins by lowering or by lifting. */
-export function timelineOf(first: 'down' | 'up', reps: number, tempo: Tempo, leadInMs = LEAD_MS, leadOutMs = LEAD_MS): Timeline {
+export function timelineOf(
+  first: 'down' | 'up',
+  reps: number,
+  tempo: Tempo,
+  leadInMs = LEAD_MS,
+  leadOutMs = LEAD_MS,
+): Timeline {
   const phases: Phase[] = [];
   let at = 0;
   const put = (kind: PhaseKind, rep: number, ms: number): void => {

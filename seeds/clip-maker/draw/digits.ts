@@ -16,7 +16,8 @@ export function drawNumber(picture: Uint8ClampedArray, width: number, value: num
     [...rows].forEach((row, r) => {
       for (let c = 0; c < 3; c++) {
         if (!(Number(row) & (4 >> c))) continue;
-        for (let y = 0; y < cell; y++) for (let x = 0; x < cell; x++) dot(cell * (1 + i * 4 + c) + x, cell * (1 + r) + y, 255);
+        for (let y = 0; y < cell; y++)
+          for (let x = 0; x < cell; x++) dot(cell * (1 + i * 4 + c) + x, cell * (1 + r) + y, 255);
       }
     });
   });

@@ -17,7 +17,11 @@ function trunkAt(skeleton: Skeleton, trunkLength: number, s: number): { at: V3; 
   const b = spine[i + 1] as Skeleton['spine'][number];
   if (x < 0) return { ...a, at: along(a.at, a.up, s * trunkLength) };
   if (x > last) return { ...b, at: along(b.at, b.up, (s - 1) * trunkLength) };
-  return { at: mix(a.at, b.at, x - i), up: unit(mix(a.up, b.up, x - i)), front: unit(mix(a.front, b.front, x - i)) };
+  return {
+    at: mix(a.at, b.at, x - i),
+    up: unit(mix(a.up, b.up, x - i)),
+    front: unit(mix(a.front, b.front, x - i)),
+  };
 }
 
 /** s, half width, depth to the front and to the back, fractions of height. */
@@ -57,9 +61,13 @@ function drawTrunk(mesh: Mesh, body: Body, skeleton: Skeleton, wear: Wardrobe): 
   const ring = ([s, side, front, back]: Slice, m: Material, hips: boolean): Ring => {
     const { at, front: u } = trunkAt(skeleton, body.trunk, s);
     const chest = Math.max(0, Math.min(1, (s - 0.45) / 0.25));
-    const girth = hips ? Math.min(body.hips, (body.hips + body.waist) / 2) : body.waist + (body.chest - body.waist) * chest;
+    const girth = hips
+      ? Math.min(body.hips, (body.hips + body.waist) / 2)
+      : body.waist + (body.chest - body.waist) * chest;
     const low = Math.max(0, Math.min(1, (0.3 - s) / 0.25));
-    const wide = hips ? body.hips : (s > 0.8 ? (body.shoulders + body.chest) / 2 : girth) * (1 - low) + body.hips * low;
+    const wide = hips
+      ? body.hips
+      : (s > 0.8 ? (body.shoulders + body.chest) / 2 : girth) * (1 - low) + body.hips * low;
     const neck = Math.max(0, Math.min(1, (s - 0.95) / 0.1));
     const deep = girth * (1 - low) + ((girth + body.hips) / 2) * low;
     const bust = hips ? 0 : body.bust * 0.014 * Math.exp(-(((s - 0.69) / 0.11) ** 2));
@@ -89,7 +97,10 @@ function drawTrunk(mesh: Mesh, body: Body, skeleton: Skeleton, wear: Wardrobe): 
       const s = (SHIRT[r] ?? SHIRT[0] ?? [0])[0];
       // Cloth gathers above the waist and hangs free at the hem.
       const fold = Math.exp(-(((s - 0.22) / 0.16) ** 2));
-      const valley = s > 0.55 && s < 0.85 ? -0.0035 * Math.exp(-((((angle > Math.PI ? 2 * Math.PI - angle : angle)) / 0.3) ** 2)) : 0;
+      const valley =
+        s > 0.55 && s < 0.85
+          ? -0.0035 * Math.exp(-(((angle > Math.PI ? 2 * Math.PI - angle : angle) / 0.3) ** 2))
+          : 0;
       return { out: h * (0.0022 * fold * Math.sin(angle * 5 + s * 21) + valley * (1 - body.bust * 0.5)) };
     },
   );
@@ -137,7 +148,13 @@ interface Limb {
 }
 
 /** Rings along two bones whose meeting is rounded, as flesh does. */
-function limbRings(limb: Limb, girths: readonly Girth[], size: number, paint: (s: number) => Material, flat: number): Ring[] {
+function limbRings(
+  limb: Limb,
+  girths: readonly Girth[],
+  size: number,
+  paint: (s: number) => Material,
+  flat: number,
+): Ring[] {
   const first = unit(sub(limb.b, limb.a));
   const second = unit(sub(limb.c, limb.b));
   const across = unit(cross(first, squareTo(limb.pole, first)));
@@ -169,7 +186,14 @@ function limbRings(limb: Limb, girths: readonly Girth[], size: number, paint: (s
   });
 }
 
-function shellOf(rings: readonly Ring[], girths: readonly Girth[], to: number, gap: (s: number) => number, m: Material, dark: Material): Ring[] {
+function shellOf(
+  rings: readonly Ring[],
+  girths: readonly Girth[],
+  to: number,
+  gap: (s: number) => number,
+  m: Material,
+  dark: Material,
+): Ring[] {
   const kept = rings.filter((_, i) => (girths[i]?.[0] ?? 9) < to);
   const next = rings[kept.length];
   const lastKept = kept[kept.length - 1];
@@ -193,7 +217,14 @@ function shellOf(rings: readonly Ring[], girths: readonly Girth[], to: number, g
   return [
     ...grown,
     hem,
-    { ...hem, front: hem.front - inner, back: hem.back - inner, side: hem.side - inner, at: mix(hem.at, lastKept.at, 0.1), material: dark },
+    {
+      ...hem,
+      front: hem.front - inner,
+      back: hem.back - inner,
+      side: hem.side - inner,
+      at: mix(hem.at, lastKept.at, 0.1),
+      material: dark,
+    },
   ];
 }
 
@@ -204,18 +235,43 @@ function drawLeg(mesh: Mesh, body: Body, skeleton: Skeleton, side: Side, look: L
   const size = h * body.limbs;
   const limb: Limb = { a: j[`hip${n}`], b: j[`knee${n}`], c: j[`ankle${n}`], pole: skeleton.kneePole[side] };
   const leggings = look.legwear === 'leggings';
-  const rings = limbRings(limb, LEG, size, (s) => (leggings && s < 1.85 ? wear.legs : s > 1.8 ? wear.sock : wear.skin), 0.94);
+  const rings = limbRings(
+    limb,
+    LEG,
+    size,
+    (s) => (leggings && s < 1.85 ? wear.legs : s > 1.8 ? wear.sock : wear.skin),
+    0.94,
+  );
   const split = LEG.findIndex(([s]) => s >= 1);
   mesh.tube(rings.slice(0, split + 1), PART[`thigh${n}`], 20);
   mesh.tube(rings.slice(split), PART[`shank${n}`], 20);
   const hip = j[`hip${n}`];
   const { pelvisFront, pelvisUp } = skeleton.torso;
   // The seat fills the back of the hip whatever the thigh does.
-  const seat = along(along(along(hip, pelvisFront, -0.017 * h), pelvisUp, -0.02 * h), skeleton.right, -0.006 * h * sign(side));
+  const seat = along(
+    along(along(hip, pelvisFront, -0.017 * h), pelvisUp, -0.02 * h),
+    skeleton.right,
+    -0.006 * h * sign(side),
+  );
   const fat = h * (0.5 * body.hips + 0.5 * body.limbs);
-  mesh.ellipsoid(seat, [pelvisFront, pelvisUp, skeleton.right], [0.053 * fat, 0.06 * fat, 0.049 * fat], wear.legs, PART.pelvis, 8, 14);
+  mesh.ellipsoid(
+    seat,
+    [pelvisFront, pelvisUp, skeleton.right],
+    [0.053 * fat, 0.06 * fat, 0.049 * fat],
+    wear.legs,
+    PART.pelvis,
+    8,
+    14,
+  );
   if (leggings) return;
-  const shell = shellOf(rings, LEG, 0.66, (s) => (0.004 + 0.009 * Math.max(0, s)) * h, wear.legs, wear.legsDark);
+  const shell = shellOf(
+    rings,
+    LEG,
+    0.66,
+    (s) => (0.004 + 0.009 * Math.max(0, s)) * h,
+    wear.legs,
+    wear.legsDark,
+  );
   mesh.tube(shell, PART[`thigh${n}`], 22, (r, angle) => {
     const outward = side === 'right' ? angle : 2 * Math.PI - angle;
     const seam = Math.abs(outward - Math.PI / 2) < 0.3 && r < shell.length - 1;
@@ -275,7 +331,14 @@ function drawFoot(mesh: Mesh, body: Body, skeleton: Skeleton, side: Side, wear: 
   );
 }
 
-function drawHand(mesh: Mesh, body: Body, skeleton: Skeleton, side: Side, gripping: boolean, wear: Wardrobe): void {
+function drawHand(
+  mesh: Mesh,
+  body: Body,
+  skeleton: Skeleton,
+  side: Side,
+  gripping: boolean,
+  wear: Wardrobe,
+): void {
   const n = side === 'left' ? 'Left' : 'Right';
   const h = body.heightM;
   const size = h * (0.6 + 0.4 * body.limbs);
@@ -284,7 +347,8 @@ function drawHand(mesh: Mesh, body: Body, skeleton: Skeleton, side: Side, grippi
   const across = cross(d, inward);
   const part = PART[`forearm${n}`];
   const wrist = skeleton.joints[`wrist${n}`];
-  const place = (forward: number, towardsPalm: number): V3 => along(along(wrist, d, forward * size), inward, towardsPalm * size);
+  const place = (forward: number, towardsPalm: number): V3 =>
+    along(along(wrist, d, forward * size), inward, towardsPalm * size);
   const slab = (at: V3, u: V3, thick: number, wide: number): Ring => ({
     at,
     u,
@@ -297,29 +361,69 @@ function drawHand(mesh: Mesh, body: Body, skeleton: Skeleton, side: Side, grippi
   });
   const back = gripping ? -0.007 : 0;
   mesh.tube(
-    [slab(place(-0.008, 0), inward, 0.0125, 0.0155), slab(place(0.006, back * 0.3), inward, 0.0125, 0.0175), slab(place(0.026, back), inward, 0.0135, 0.0235), slab(place(0.046, back), inward, 0.0128, 0.0248), slab(place(0.057, back), inward, 0.009, 0.021)],
+    [
+      slab(place(-0.008, 0), inward, 0.0125, 0.0155),
+      slab(place(0.006, back * 0.3), inward, 0.0125, 0.0175),
+      slab(place(0.026, back), inward, 0.0135, 0.0235),
+      slab(place(0.046, back), inward, 0.0128, 0.0248),
+      slab(place(0.057, back), inward, 0.009, 0.021),
+    ],
     part,
     14,
   );
   const thumbSide = sign(side);
   if (gripping) {
     mesh.tube(
-      [slab(place(0.05, back), inward, 0.0105, 0.0225), slab(place(0.064, back + 0.006), unit(add(inward, d)), 0.0105, 0.024), slab(place(0.068, 0.016), d, 0.0105, 0.0242), slab(place(0.06, 0.026), unit(sub(d, inward)), 0.0105, 0.0235), slab(place(0.046, 0.026), scale(inward, -1), 0.0095, 0.0215), slab(place(0.04, 0.022), scale(d, -1), 0.006, 0.017)],
+      [
+        slab(place(0.05, back), inward, 0.0105, 0.0225),
+        slab(place(0.064, back + 0.006), unit(add(inward, d)), 0.0105, 0.024),
+        slab(place(0.068, 0.016), d, 0.0105, 0.0242),
+        slab(place(0.06, 0.026), unit(sub(d, inward)), 0.0105, 0.0235),
+        slab(place(0.046, 0.026), scale(inward, -1), 0.0095, 0.0215),
+        slab(place(0.04, 0.022), scale(d, -1), 0.006, 0.017),
+      ],
       part,
       14,
     );
   } else {
     mesh.tube(
-      [slab(place(0.05, 0), inward, 0.0105, 0.0235), slab(place(0.07, 0.003), inward, 0.009, 0.0225), slab(place(0.09, 0.008), inward, 0.0078, 0.019), slab(place(0.104, 0.012), inward, 0.0045, 0.012)],
+      [
+        slab(place(0.05, 0), inward, 0.0105, 0.0235),
+        slab(place(0.07, 0.003), inward, 0.009, 0.0225),
+        slab(place(0.09, 0.008), inward, 0.0078, 0.019),
+        slab(place(0.104, 0.012), inward, 0.0045, 0.012),
+      ],
       part,
       14,
     );
   }
   const thumb = along(place(0.02, 0.004), across, -0.021 * size * thumbSide);
-  const tip = along(place(gripping ? 0.05 : 0.055, gripping ? 0.024 : 0.012), across, -(gripping ? 0.014 : 0.031) * size * thumbSide);
+  const tip = along(
+    place(gripping ? 0.05 : 0.055, gripping ? 0.024 : 0.012),
+    across,
+    -(gripping ? 0.014 : 0.031) * size * thumbSide,
+  );
   const knuckle = along(mix(thumb, tip, 0.5), across, -0.006 * size * thumbSide);
-  const bead = (at: V3, r: number): Ring => ({ at, u: inward, v: across, front: r * size, back: r * size, side: r * size, material: wear.skin });
-  mesh.tube([bead(thumb, 0.004), bead(mix(thumb, knuckle, 0.3), 0.0085), bead(knuckle, 0.0082), bead(tip, 0.007), bead(along(tip, d, 0.005 * size), 0.003)], part, 10);
+  const bead = (at: V3, r: number): Ring => ({
+    at,
+    u: inward,
+    v: across,
+    front: r * size,
+    back: r * size,
+    side: r * size,
+    material: wear.skin,
+  });
+  mesh.tube(
+    [
+      bead(thumb, 0.004),
+      bead(mix(thumb, knuckle, 0.3), 0.0085),
+      bead(knuckle, 0.0082),
+      bead(tip, 0.007),
+      bead(along(tip, d, 0.005 * size), 0.003),
+    ],
+    part,
+    10,
+  );
 }
 
 function drawArm(mesh: Mesh, body: Body, skeleton: Skeleton, side: Side, wear: Wardrobe): void {
@@ -328,15 +432,35 @@ function drawArm(mesh: Mesh, body: Body, skeleton: Skeleton, side: Side, wear: W
   const h = body.heightM;
   const size = h * body.limbs;
   const shoulder = j[`shoulder${n}`];
-  const limb: Limb = { a: shoulder, b: j[`elbow${n}`], c: j[`wrist${n}`], pole: scale(skeleton.elbowPole[side], -1) };
+  const limb: Limb = {
+    a: shoulder,
+    b: j[`elbow${n}`],
+    c: j[`wrist${n}`],
+    pole: scale(skeleton.elbowPole[side], -1),
+  };
   const rings = limbRings(limb, ARM, size, () => wear.skin, 0.97);
   const split = ARM.findIndex(([s]) => s >= 1);
   mesh.tube(rings.slice(0, split + 1), PART[`upperArm${n}`], 18);
   mesh.tube(rings.slice(split), PART[`forearm${n}`], 18);
-  const sleeve = shellOf(rings, ARM, 0.5, (s) => (0.0035 + 0.008 * Math.max(0, s)) * h, wear.shirt, wear.shirtDark);
+  const sleeve = shellOf(
+    rings,
+    ARM,
+    0.5,
+    (s) => (0.0035 + 0.008 * Math.max(0, s)) * h,
+    wear.shirt,
+    wear.shirtDark,
+  );
   mesh.tube(sleeve, PART[`upperArm${n}`], 20);
   const { chestUp, chestFront } = skeleton.torso;
-  mesh.ellipsoid(shoulder, [chestFront, chestUp, skeleton.right], [0.036 * size, 0.0355 * size, 0.0365 * size], wear.shirt, PART.torso, 8, 14);
+  mesh.ellipsoid(
+    shoulder,
+    [chestFront, chestUp, skeleton.right],
+    [0.036 * size, 0.0355 * size, 0.0365 * size],
+    wear.shirt,
+    PART.torso,
+    8,
+    14,
+  );
   // The slope from the neck to the shoulder.
   const neck = along(trunkAt(skeleton, body.trunk, 1.03).at, skeleton.right, sign(side) * 0.02 * h);
   const away = unit(sub(shoulder, neck));
@@ -357,7 +481,14 @@ function drawArm(mesh: Mesh, body: Body, skeleton: Skeleton, side: Side, wear: W
 }
 
 /** Adds the figure's triangles to the mesh. `gripping` says which hands hold something. */
-export function drawFigure(mesh: Mesh, body: Body, skeleton: Skeleton, look: Look, wear: Wardrobe, gripping: Record<Side, boolean>): void {
+export function drawFigure(
+  mesh: Mesh,
+  body: Body,
+  skeleton: Skeleton,
+  look: Look,
+  wear: Wardrobe,
+  gripping: Record<Side, boolean>,
+): void {
   drawTrunk(mesh, body, skeleton, wear);
   for (const side of SIDES) {
     drawLeg(mesh, body, skeleton, side, look, wear);

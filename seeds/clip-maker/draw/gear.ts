@@ -13,11 +13,26 @@ const WOOD_DARK = material('#8a6640');
 const bandOf = (kg: number): Material => BAND[Math.floor(kg / 4) % BAND.length] ?? IRON;
 
 /** A turned shape: pairs of (distance along the axis, radius), metres. */
-function lathe(mesh: Mesh, at: V3, axis: V3, profile: readonly (readonly [number, number, Material?])[], m: Material, around = 18): void {
+function lathe(
+  mesh: Mesh,
+  at: V3,
+  axis: V3,
+  profile: readonly (readonly [number, number, Material?])[],
+  m: Material,
+  around = 18,
+): void {
   const u = squareTo(Math.abs(axis[1]) > 0.9 ? [1, 0, 0] : UP, axis);
   const v = cross(axis, u);
   mesh.tube(
-    profile.map(([d, r, own]): Ring => ({ at: along(at, axis, d), u, v, front: r, back: r, side: r, material: own ?? m })),
+    profile.map(([d, r, own]): Ring => ({
+      at: along(at, axis, d),
+      u,
+      v,
+      front: r,
+      back: r,
+      side: r,
+      material: own ?? m,
+    })),
     PART.implement,
     around,
   );
@@ -50,7 +65,15 @@ function drawKettlebell(mesh: Mesh, item: Implement, kg: number): void {
       const before = points[Math.max(0, i - 1)] ?? p;
       const after = points[Math.min(points.length - 1, i + 1)] ?? p;
       const way = unit([after[0] - before[0], after[1] - before[1], after[2] - before[2]]);
-      return { at: p, u: cross(side, way), v: side, front: 0.0165, back: 0.0165, side: 0.0165, material: IRON };
+      return {
+        at: p,
+        u: cross(side, way),
+        v: side,
+        front: 0.0165,
+        back: 0.0165,
+        side: 0.0165,
+        material: IRON,
+      };
     }),
     PART.implement,
     10,
@@ -111,11 +134,29 @@ export function drawHeld(mesh: Mesh, held: readonly Implement[], loadKg: number)
 export function drawBox(mesh: Mesh, at: V3, size: V3, turnCos: number, turnSin: number): void {
   const u: V3 = [turnCos, 0, turnSin];
   const v: V3 = [-turnSin, 0, turnCos];
-  mesh.block(add(at, [0, size[1] / 2, 0]), [u, UP, v], [size[0] / 2, size[1] / 2, size[2] / 2], WOOD, PART.prop);
+  mesh.block(
+    add(at, [0, size[1] / 2, 0]),
+    [u, UP, v],
+    [size[0] / 2, size[1] / 2, size[2] / 2],
+    WOOD,
+    PART.prop,
+  );
   const hole = add(at, [0, size[1] * 0.74, 0]);
   for (const way of [-1, 1]) {
-    mesh.ellipsoid(along(hole, v, (way * size[2]) / 2), [u, UP, v], [0.055, 0.018, 0.002], WOOD_DARK, PART.prop);
-    mesh.ellipsoid(along(hole, u, (way * size[0]) / 2), [v, UP, u], [0.055, 0.018, 0.002], WOOD_DARK, PART.prop);
+    mesh.ellipsoid(
+      along(hole, v, (way * size[2]) / 2),
+      [u, UP, v],
+      [0.055, 0.018, 0.002],
+      WOOD_DARK,
+      PART.prop,
+    );
+    mesh.ellipsoid(
+      along(hole, u, (way * size[0]) / 2),
+      [v, UP, u],
+      [0.055, 0.018, 0.002],
+      WOOD_DARK,
+      PART.prop,
+    );
   }
 }
 
@@ -126,14 +167,20 @@ export function drawChair(mesh: Mesh, at: V3, u: V3): void {
   const put = (x: number, y: number, z: number): V3 => add(along(along(at, u, x), v, z), [0, y, 0]);
   mesh.block(put(0, 0.45, 0), axes, [0.21, 0.018, 0.205], WOOD, PART.prop);
   for (const x of [-0.18, 0.18]) {
-    for (const z of [-0.175, 0.175]) mesh.block(put(x, 0.22, z), axes, [0.018, 0.22, 0.018], WOOD_DARK, PART.prop);
+    for (const z of [-0.175, 0.175])
+      mesh.block(put(x, 0.22, z), axes, [0.018, 0.22, 0.018], WOOD_DARK, PART.prop);
   }
-  for (const z of [-0.175, 0.175]) mesh.block(put(-0.195, 0.67, z), axes, [0.016, 0.21, 0.018], WOOD_DARK, PART.prop);
+  for (const z of [-0.175, 0.175])
+    mesh.block(put(-0.195, 0.67, z), axes, [0.016, 0.21, 0.018], WOOD_DARK, PART.prop);
   mesh.block(put(-0.2, 0.82, 0), axes, [0.012, 0.055, 0.19], WOOD, PART.prop);
 }
 
 /** A kettlebell that stands on the floor. */
 export function drawStandingBell(mesh: Mesh, at: V3, kg: number): void {
   const r = bellRadius(kg);
-  drawKettlebell(mesh, { kind: 'kettlebell', at: add(at, [0, r * 0.9, 0]), grip: at, axis: [1, 0, 0.4], hang: [0, -1, 0] }, kg);
+  drawKettlebell(
+    mesh,
+    { kind: 'kettlebell', at: add(at, [0, r * 0.9, 0]), grip: at, axis: [1, 0, 0.4], hang: [0, -1, 0] },
+    kg,
+  );
 }

@@ -54,7 +54,11 @@ export function drawHead(mesh: Mesh, body: Body, skeleton: Skeleton, look: Look,
   const { centre, up, front } = skeleton.head;
   const right = unit(cross(front, up));
   const part = PART.head;
-  const ring = ([y, side, f, b]: readonly [number, number, number, number], m: Material, grow: number): Ring => ({
+  const ring = (
+    [y, side, f, b]: readonly [number, number, number, number],
+    m: Material,
+    grow: number,
+  ): Ring => ({
     at: along(centre, up, (y + (y > 0.06 ? grow : 0)) * h),
     u: front,
     v: right,
@@ -94,7 +98,10 @@ export function drawHead(mesh: Mesh, body: Body, skeleton: Skeleton, look: Look,
       const over = smooth((y - hairline(angle)) / 0.008);
       const height = smooth((y - 0.015) / 0.035);
       const full = style.side + (style.top - style.side) * height;
-      const bump = look.hair === 'curls' ? 0.003 * Math.sin(angle * 9 + y * 420) * Math.cos(y * 300 + angle * 4) : 0.0006 * Math.sin(angle * 14 + y * 60);
+      const bump =
+        look.hair === 'curls'
+          ? 0.003 * Math.sin(angle * 9 + y * 420) * Math.cos(y * 300 + angle * 4)
+          : 0.0006 * Math.sin(angle * 14 + y * 60);
       return { out: h * (-0.006 + over * (0.006 + full + bump)) };
     },
   );
@@ -110,7 +117,11 @@ export function drawHead(mesh: Mesh, body: Body, skeleton: Skeleton, look: Look,
     const out = unit(cross(right, fall));
     mesh.tube(
       TAIL.map(([s, thick]): Ring => ({
-        at: along(along(root, fall, 0.115 * h * s), front, -0.018 * h * Math.sin(Math.PI * Math.min(1, s * 1.4)) * 0.8),
+        at: along(
+          along(root, fall, 0.115 * h * s),
+          front,
+          -0.018 * h * Math.sin(Math.PI * Math.min(1, s * 1.4)) * 0.8,
+        ),
         u: out,
         v: right,
         front: h * thick,

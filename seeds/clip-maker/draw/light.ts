@@ -50,7 +50,13 @@ export class Blockers {
 }
 
 /** Fills the blockers from a figure and what it holds. */
-export function blockersOf(blockers: Blockers, body: Body, skeleton: Skeleton, held: readonly Implement[], loadKg: number): void {
+export function blockersOf(
+  blockers: Blockers,
+  body: Body,
+  skeleton: Skeleton,
+  held: readonly Implement[],
+  loadKg: number,
+): void {
   const h = body.heightM;
   const j = skeleton.joints;
   const g = body.limbs;
@@ -63,25 +69,45 @@ export function blockersOf(blockers: Blockers, body: Body, skeleton: Skeleton, h
       blockers.add(along(spine(i), skeleton.right, wide * way), 0.056 * h * body.waist, PART.torso);
     }
   }
-  for (const way of [-1, 1]) blockers.add(along(spine(0), skeleton.right, 0.045 * h * way), 0.062 * h * body.hips, PART.pelvis);
+  for (const way of [-1, 1])
+    blockers.add(along(spine(0), skeleton.right, 0.045 * h * way), 0.062 * h * body.hips, PART.pelvis);
   for (const side of SIDES) {
     const n = side === 'left' ? 'Left' : 'Right';
     const row = (from: V3, to: V3, shares: number[], radii: number[], part: number): void => {
-      blockers.row(from, to, shares, radii.map((r) => r * h * g), part);
+      blockers.row(
+        from,
+        to,
+        shares,
+        radii.map((r) => r * h * g),
+        part,
+      );
     };
     row(j[`shoulder${n}`], j[`elbow${n}`], [0.35, 0.65, 0.95], [0.03, 0.027, 0.023], PART[`upperArm${n}`]);
     row(j[`elbow${n}`], j[`wrist${n}`], [0.25, 0.6, 0.95], [0.024, 0.021, 0.017], PART[`forearm${n}`]);
     blockers.add(j[`hand${n}`], 0.024 * h, PART[`forearm${n}`]);
     row(j[`hip${n}`], j[`knee${n}`], [0.3, 0.5, 0.72, 0.95], [0.05, 0.046, 0.04, 0.034], PART[`thigh${n}`]);
-    row(j[`knee${n}`], j[`ankle${n}`], [0.2, 0.42, 0.68, 0.95], [0.032, 0.031, 0.024, 0.02], PART[`shank${n}`]);
-    row(j[`heel${n}`], j[`toe${n}`], [0.12, 0.4, 0.68, 0.9], [0.026 / g, 0.026 / g, 0.024 / g, 0.018 / g], PART[`foot${n}`]);
+    row(
+      j[`knee${n}`],
+      j[`ankle${n}`],
+      [0.2, 0.42, 0.68, 0.95],
+      [0.032, 0.031, 0.024, 0.02],
+      PART[`shank${n}`],
+    );
+    row(
+      j[`heel${n}`],
+      j[`toe${n}`],
+      [0.12, 0.4, 0.68, 0.9],
+      [0.026 / g, 0.026 / g, 0.024 / g, 0.018 / g],
+      PART[`foot${n}`],
+    );
   }
   for (const item of held) {
     if (item.kind === 'kettlebell') blockers.add(item.at, bellRadius(loadKg), PART.implement);
     else if (item.kind === 'dumbbell') {
       for (const way of [-1, 1]) blockers.add(along(item.at, item.axis, 0.1 * way), 0.06, PART.implement);
     } else {
-      for (const way of [-1, 1]) blockers.add(along(item.at, item.axis, 0.585 * way), plateRadius(loadKg) * 0.8, PART.implement);
+      for (const way of [-1, 1])
+        blockers.add(along(item.at, item.axis, 0.585 * way), plateRadius(loadKg) * 0.8, PART.implement);
     }
   }
 }
@@ -131,7 +157,13 @@ export function openness(
 }
 
 /** Lights every vertex; writes three bytes' worth of colour a vertex. */
-export function lightMesh(mesh: Mesh, light: Light, blockers: Blockers, camera: Camera, lit: Float32Array): void {
+export function lightMesh(
+  mesh: Mesh,
+  light: Light,
+  blockers: Blockers,
+  camera: Camera,
+  lit: Float32Array,
+): void {
   const { position, normal, surface, part } = mesh;
   const open = new Float32Array(2);
   const [lx, ly, lz] = light.towards;
@@ -178,7 +210,9 @@ export function lightMesh(mesh: Mesh, light: Light, blockers: Blockers, camera: 
       const key = (light.key[c] as number) * (c === 0 ? kr : kg);
       const value = (surface[i * 5 + c] as number) * (ambient + key + rim) + hl;
       // A shoulder keeps bright cloth from burning out; the square root goes back from light to bytes.
-      lit[i * 3 + c] = 255 * Math.sqrt(value < 0.6 ? value : Math.min(0.995, 0.6 + 0.4 * (1 - Math.exp(-(value - 0.6) / 0.4))));
+      lit[i * 3 + c] =
+        255 *
+        Math.sqrt(value < 0.6 ? value : Math.min(0.995, 0.6 + 0.4 * (1 - Math.exp(-(value - 0.6) / 0.4))));
     }
   }
 }

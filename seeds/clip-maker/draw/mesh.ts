@@ -122,7 +122,9 @@ export class Mesh {
       const after = rings[Math.min(rows - 1, r + 1)] as Ring;
       const axis = unit(sub(after.at, before.at), cross(ring.u, ring.v));
       const near = r === 0 ? after : before;
-      const pointed = (r === 0 || r === rows - 1) && Math.max(ring.front, ring.side) < 0.3 * Math.max(near.front, near.side);
+      const pointed =
+        (r === 0 || r === rows - 1) &&
+        Math.max(ring.front, ring.side) < 0.3 * Math.max(near.front, near.side);
       for (let k = 0; k < around; k++) {
         const n = raw[r * around + k] as V3;
         const end: V3 = r < rows / 2 ? [-axis[0], -axis[1], -axis[2]] : axis;
@@ -141,7 +143,15 @@ export class Mesh {
   }
 
   /** An ellipsoid with its own axes; radii in metres. */
-  ellipsoid(at: V3, axes: readonly [V3, V3, V3], radii: V3, m: Material, part: number, rows = 8, around = 12): void {
+  ellipsoid(
+    at: V3,
+    axes: readonly [V3, V3, V3],
+    radii: V3,
+    m: Material,
+    part: number,
+    rows = 8,
+    around = 12,
+  ): void {
     const rings: Ring[] = [];
     for (let r = 0; r <= rows; r++) {
       const a = (Math.PI * r) / rows - Math.PI / 2;
@@ -175,7 +185,18 @@ export class Mesh {
         const first = this.vertices;
         for (let i = 0; i <= steps; i++) {
           for (let k = 0; k <= steps; k++) {
-            const p = add(middle, along([u[0] * hu * ((2 * i) / steps - 1), u[1] * hu * ((2 * i) / steps - 1), u[2] * hu * ((2 * i) / steps - 1)], v, hv * ((2 * k) / steps - 1)));
+            const p = add(
+              middle,
+              along(
+                [
+                  u[0] * hu * ((2 * i) / steps - 1),
+                  u[1] * hu * ((2 * i) / steps - 1),
+                  u[2] * hu * ((2 * i) / steps - 1),
+                ],
+                v,
+                hv * ((2 * k) / steps - 1),
+              ),
+            );
             this.vertex(p, facing, m, part);
           }
         }

@@ -46,7 +46,9 @@ export class Painter {
     this.margin = plan.sway > 0 ? Math.ceil(0.05 * Math.max(width, height) * plan.sway) + 4 : 0;
     this.room = paintRoom(this.camera, this.light, plan.scene, plan.lift.id, plan.seed, this.margin);
     const next = seeded(plan.seed * 17 + 29);
-    this.noise = Int8Array.from({ length: NOISE_SIZE * NOISE_SIZE }, () => Math.round((next() + next() + next() - 1.5) * 7 * plan.noise));
+    this.noise = Int8Array.from({ length: NOISE_SIZE * NOISE_SIZE }, () =>
+      Math.round((next() + next() + next() - 1.5) * 7 * plan.noise),
+    );
     if (plan.sway > 0) {
       const still = createCanvas(this.room.width, this.room.height);
       const context = still.getContext('2d');
@@ -87,8 +89,12 @@ export class Painter {
   private figure({ skeleton, held }: Instant, shake: Shake): void {
     const { mesh, plan } = this;
     mesh.clear();
-    const grips = (side: 'left' | 'right'): boolean => held.length > 0 && !(plan.lift.id === 'floor-press' && side === 'left');
-    drawFigure(mesh, plan.body, skeleton, plan.look, this.wear, { left: grips('left'), right: grips('right') });
+    const grips = (side: 'left' | 'right'): boolean =>
+      held.length > 0 && !(plan.lift.id === 'floor-press' && side === 'left');
+    drawFigure(mesh, plan.body, skeleton, plan.look, this.wear, {
+      left: grips('left'),
+      right: grips('right'),
+    });
     drawHeld(mesh, held, plan.loadKg);
     this.blockers.clear();
     blockersOf(this.blockers, plan.body, skeleton, held, plan.loadKg);

@@ -29,7 +29,13 @@ export class Raster {
   }
 
   /** Draws the mesh with its lit colours (three bytes' worth a vertex) over the RGBA picture. */
-  draw(mesh: Mesh, lit: Float32Array, camera: Camera, picture: Uint8ClampedArray, shake: Shake = STILL): void {
+  draw(
+    mesh: Mesh,
+    lit: Float32Array,
+    camera: Camera,
+    picture: Uint8ClampedArray,
+    shake: Shake = STILL,
+  ): void {
     const n = mesh.vertices;
     if (this.screen.length < n * 3) this.screen = new Float32Array(n * 3);
     const screen = this.screen;
@@ -39,7 +45,11 @@ export class Raster {
     let x1 = -Infinity;
     let y1 = -Infinity;
     for (let i = 0; i < n; i++) {
-      const seen = project(camera, [p[i * 3] as number, p[i * 3 + 1] as number, p[i * 3 + 2] as number], shake);
+      const seen = project(
+        camera,
+        [p[i * 3] as number, p[i * 3 + 1] as number, p[i * 3 + 2] as number],
+        shake,
+      );
       screen[i * 3] = seen.x * FINE;
       screen[i * 3 + 1] = seen.y * FINE;
       screen[i * 3 + 2] = 1 / seen.depthM;
@@ -125,7 +135,10 @@ export class Raster {
           if (z <= (depth[at] as number)) continue;
           depth[at] = z;
           colour[at] =
-            0xff000000 | ((ab + bb * wb + cb * wc) << 16) | ((ag + bg * wb + cg * wc) << 8) | (ar + br * wb + cr * wc);
+            0xff000000 |
+            ((ab + bb * wb + cb * wc) << 16) |
+            ((ag + bg * wb + cg * wc) << 8) |
+            (ar + br * wb + cr * wc);
         }
       }
     }
@@ -147,9 +160,19 @@ export class Raster {
         const rest = 4 - covered;
         picture[o] = ((a & 255) + (b & 255) + (c & 255) + (d & 255) + rest * (picture[o] as number)) / 4;
         picture[o + 1] =
-          (((a >> 8) & 255) + ((b >> 8) & 255) + ((c >> 8) & 255) + ((d >> 8) & 255) + rest * (picture[o + 1] as number)) / 4;
+          (((a >> 8) & 255) +
+            ((b >> 8) & 255) +
+            ((c >> 8) & 255) +
+            ((d >> 8) & 255) +
+            rest * (picture[o + 1] as number)) /
+          4;
         picture[o + 2] =
-          (((a >> 16) & 255) + ((b >> 16) & 255) + ((c >> 16) & 255) + ((d >> 16) & 255) + rest * (picture[o + 2] as number)) / 4;
+          (((a >> 16) & 255) +
+            ((b >> 16) & 255) +
+            ((c >> 16) & 255) +
+            ((d >> 16) & 255) +
+            rest * (picture[o + 2] as number)) /
+          4;
       }
     }
   }

@@ -51,7 +51,13 @@ export function hitAt(camera: Camera, x: number, y: number, shake: Shake = STILL
   const py = y - shake.dy - camera.height / 2;
   const ux = camera.width / 2 + px * c - py * s;
   const uy = camera.height / 2 + px * s + py * c;
-  const ray = add(camera.ahead, add(scale(camera.right, (ux - camera.centreX) / camera.focalPx), scale(camera.up, (camera.centreY - uy) / camera.focalPx)));
+  const ray = add(
+    camera.ahead,
+    add(
+      scale(camera.right, (ux - camera.centreX) / camera.focalPx),
+      scale(camera.up, (camera.centreY - uy) / camera.focalPx),
+    ),
+  );
   let best = ray[1] < 0 ? -camera.eye[1] / ray[1] : 50;
   let wall: (typeof WALLS)[number] | undefined;
   for (const candidate of WALLS) {
@@ -74,7 +80,8 @@ const smooth = (x: number): number => {
   return c * c * (3 - 2 * c);
 };
 /** 1 between a and b, 0 outside, soft over `edge`. */
-const between = (x: number, a: number, b: number, edge: number): number => smooth((x - a) / edge + 0.5) * smooth((b - x) / edge + 0.5);
+const between = (x: number, a: number, b: number, edge: number): number =>
+  smooth((x - a) / edge + 0.5) * smooth((b - x) / edge + 0.5);
 
 function lattice(seed: number): (x: number, y: number) => number {
   const next = seeded(seed);
@@ -128,7 +135,14 @@ function windowLight(s: number, y: number): number {
 }
 
 /** The still picture behind the figure: RGBA, `margin` pixels wider on every side so that a hand can shake it. */
-export function paintRoom(camera: Camera, light: Light, scene: Scene, lift: LiftId, seed: number, margin: number): { rgba: Uint8ClampedArray; width: number; height: number } {
+export function paintRoom(
+  camera: Camera,
+  light: Light,
+  scene: Scene,
+  lift: LiftId,
+  seed: number,
+  margin: number,
+): { rgba: Uint8ClampedArray; width: number; height: number } {
   const paint = PAINT[scene];
   const rgb = (hex: string): V3 => material(hex).rgb;
   const wall = rgb(paint.wall);
@@ -142,7 +156,13 @@ export function paintRoom(camera: Camera, light: Light, scene: Scene, lift: Lift
   props(mesh, blockers, lift);
   const width = camera.width + 2 * margin;
   const height = camera.height + 2 * margin;
-  const moved: Camera = { ...camera, width, height, centreX: camera.centreX + margin, centreY: camera.centreY + margin };
+  const moved: Camera = {
+    ...camera,
+    width,
+    height,
+    centreX: camera.centreX + margin,
+    centreY: camera.centreY + margin,
+  };
   const rgba = new Uint8ClampedArray(width * height * 4);
   const open = new Float32Array(2);
   const sum = [0, 0, 0];
@@ -154,8 +174,13 @@ export function paintRoom(camera: Camera, light: Light, scene: Scene, lift: Lift
     let sunlit = 0;
     if (hit.surface === 'wall') {
       const inBand = paint.bandTop > 0 ? 1 - smooth((y - paint.bandTop) / 0.008 + 0.5) : 0;
-      base = [wall[0] + (band[0] - wall[0]) * inBand, wall[1] + (band[1] - wall[1]) * inBand, wall[2] + (band[2] - wall[2]) * inBand];
-      let texture = 0.965 + 0.045 * noise(hit.s * 3.1 + 40, y * 3.1 + 9) + 0.025 * noise(hit.s * 23 + 3, y * 23);
+      base = [
+        wall[0] + (band[0] - wall[0]) * inBand,
+        wall[1] + (band[1] - wall[1]) * inBand,
+        wall[2] + (band[2] - wall[2]) * inBand,
+      ];
+      let texture =
+        0.965 + 0.045 * noise(hit.s * 3.1 + 40, y * 3.1 + 9) + 0.025 * noise(hit.s * 23 + 3, y * 23);
       if (paint.brick) {
         const course = Math.floor(y / 0.085);
         const bx = hit.s / 0.25 + (course % 2) * 0.5;
@@ -174,10 +199,20 @@ export function paintRoom(camera: Camera, light: Light, scene: Scene, lift: Lift
       const lip = paint.bandTop > 0 ? between(y, paint.bandTop - 0.012, paint.bandTop + 0.006, 0.006) : 0;
       texture *= 1 - (paint.planks ? -0.18 : 0.1) * lip;
       const board = between(y, -1, 0.095, 0.004);
-      base = [base[0] + (skirting[0] - base[0]) * board, base[1] + (skirting[1] - base[1]) * board, base[2] + (skirting[2] - base[2]) * board];
+      base = [
+        base[0] + (skirting[0] - base[0]) * board,
+        base[1] + (skirting[1] - base[1]) * board,
+        base[2] + (skirting[2] - base[2]) * board,
+      ];
       const corner = 1 - 0.2 * Math.exp(-y / 0.22) * (1 - board);
       const across = 0.5 + 0.5 * Math.tanh((hit.s - PATCH.middle) * 0.55);
-      lightness = texture * corner * (0.84 + 0.1 * Math.min(1, y / 2.4) - 0.14 * across + 0.1 * Math.exp(-((hit.s - PATCH.middle) ** 2 + (y - 1.8) ** 2) / 0.9));
+      lightness =
+        texture *
+        corner *
+        (0.84 +
+          0.1 * Math.min(1, y / 2.4) -
+          0.14 * across +
+          0.1 * Math.exp(-((hit.s - PATCH.middle) ** 2 + (y - 1.8) ** 2) / 0.9));
       sunlit = windowLight(hit.s, y);
     } else {
       base = floor;
@@ -187,7 +222,10 @@ export function paintRoom(camera: Camera, light: Light, scene: Scene, lift: Lift
       if (scene !== 'garage') {
         const tx = x + 0.31;
         const tz = z + 0.17;
-        const seam = 1 - between(tx - Math.floor(tx), 0.003, 0.997, 0.006) * between(tz - Math.floor(tz), 0.003, 0.997, 0.006);
+        const seam =
+          1 -
+          between(tx - Math.floor(tx), 0.003, 0.997, 0.006) *
+            between(tz - Math.floor(tz), 0.003, 0.997, 0.006);
         texture *= 1 - 0.22 * seam;
       }
       const ragged = 0.004 * (noise(x * 60, z * 60) - 0.5);
@@ -197,7 +235,11 @@ export function paintRoom(camera: Camera, light: Light, scene: Scene, lift: Lift
       );
       if (strip > 0) {
         const worn = 0.9 + 0.14 * noise(x * 18, z * 18 + 4);
-        base = [base[0] + (tape[0] - base[0]) * strip, base[1] + (tape[1] - base[1]) * strip, base[2] + (tape[2] - base[2]) * strip];
+        base = [
+          base[0] + (tape[0] - base[0]) * strip,
+          base[1] + (tape[1] - base[1]) * strip,
+          base[2] + (tape[2] - base[2]) * strip,
+        ];
         texture = texture * (1 - strip) + worn * strip;
       }
       const far = Math.min(x + 2.15, z + 1.95, 2.35 - x);

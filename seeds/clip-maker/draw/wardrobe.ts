@@ -53,7 +53,8 @@ export function wardrobeOf(look: Look): Wardrobe {
     shirtDark: tinted(material(shirt), 0.72),
     legs: material(legs, look.legwear === 'leggings' ? 0.12 : 0.03),
     legsDark: tinted(material(legs), 0.6),
-    stripe: look.legwear === 'leggings' ? material(legs, 0.12) : mixRgb(material(legs), material('#f4f2ec'), 0.22),
+    stripe:
+      look.legwear === 'leggings' ? material(legs, 0.12) : mixRgb(material(legs), material('#f4f2ec'), 0.22),
     shoe: material(shoe, 0.06),
     sole: material(sole, 0.05),
     sock: material('#d8d5cd'),

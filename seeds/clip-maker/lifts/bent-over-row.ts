@@ -29,7 +29,13 @@ export const bentOverRow: LiftModel = {
       thoracic: 3 + 22 * rounding - 2 * pull,
       gaze: trunk * 0.78,
       shrug: -0.006 * (1 - pull),
-      root: { kind: 'balanced', lead: 'right', knee: 26 + 40 * squat - 4 * rise, overX: 0.005 * m.drift[1], carriedKg: m.loadKg },
+      root: {
+        kind: 'balanced',
+        lead: 'right',
+        knee: 26 + 40 * squat - 4 * rise,
+        overX: 0.005 * m.drift[1],
+        carriedKg: m.loadKg,
+      },
       legs: stance(0.19 * h, 10, 0, 0),
       arms: (torso) =>
         bothArms((side, out) => {
@@ -38,7 +44,11 @@ export const bentOverRow: LiftModel = {
           const middle = torso.midShoulder;
           const hang = along([middle[0] - 0.01 * h, middle[1] - torso.armLength * 0.99, 0], out, wide);
           const belly = along(
-            along(along(torso.midHip, torso.pelvisUp, 0.1 * h), torso.pelvisFront, (0.085 + 0.02 * m.body.waist) * h),
+            along(
+              along(torso.midHip, torso.pelvisUp, 0.1 * h),
+              torso.pelvisFront,
+              (0.085 + 0.02 * m.body.waist) * h,
+            ),
             out,
             wide,
           );

@@ -27,7 +27,12 @@ export const floorPress: LiftModel = {
     const hips = add(shoulders, scale(sagittal(trunk), -m.body.trunk));
     const leg = (side: Side): LegPose => ({
       kind: 'planted',
-      foot: { x: 0.27 * h - 0.34 * h + m.body.trunk, z: (side === 'right' ? 1 : -1) * 0.1 * h, toeOut: 8, heelLift: 0 },
+      foot: {
+        x: 0.27 * h - 0.34 * h + m.body.trunk,
+        z: (side === 'right' ? 1 : -1) * 0.1 * h,
+        toeOut: 8,
+        heelLift: 0,
+      },
       kneeIn: 0,
       kneesUp: true,
     });

@@ -55,7 +55,12 @@ export const gobletSquat: LiftModel = {
         overX: 0.006 * m.drift[1] + 0.03 * m.dose('heels-lift') * deep,
         carriedKg: m.loadKg,
       },
-      legs: stance(0.215 * h, 20, 22 * m.dose('heels-lift') * clamp01((down - 0.3) / 0.5), 46 * m.dose('knees-fall-in') * clamp01(down * 1.4)),
+      legs: stance(
+        0.215 * h,
+        20,
+        22 * m.dose('heels-lift') * clamp01((down - 0.3) / 0.5),
+        46 * m.dose('knees-fall-in') * clamp01(down * 1.4),
+      ),
       arms: (torso) =>
         bothArms((_side, out) => ({
           wrist: fromChest(torso, (0.105 + 0.11 * away) * h, (-0.062 - 0.03 * away) * h, out, 0.034 * h),
@@ -67,7 +72,11 @@ export const gobletSquat: LiftModel = {
   held: (skeleton, m) => {
     const { chestUp } = skeleton.torso;
     const hang: V3 = unit([-chestUp[0] * 0.5, -1, 0]);
-    return [m.implement === 'dumbbell' ? dumbbellInBothHands(skeleton, hang) : bellInBothHands(skeleton, hang, m.loadKg)];
+    return [
+      m.implement === 'dumbbell'
+        ? dumbbellInBothHands(skeleton, hang)
+        : bellInBothHands(skeleton, hang, m.loadKg),
+    ];
   },
 };
 

@@ -22,13 +22,31 @@ interface State {
 }
 
 const STRAIGHT = -0.326;
-const AT_HIPS: State = { trunk: 1, knee: 4, heel: 0, forward: 0.062, up: STRAIGHT, through: 0, shrug: 0, extended: 0, caught: 0, hinge: 0 };
+const AT_HIPS: State = {
+  trunk: 1,
+  knee: 4,
+  heel: 0,
+  forward: 0.062,
+  up: STRAIGHT,
+  through: 0,
+  shrug: 0,
+  extended: 0,
+  caught: 0,
+  hinge: 0,
+};
 
 function stateOf(m: Moment): State {
   const deep = m.depth;
   const early = m.dose('early-arm-pull');
   const away = m.dose('bar-swings-away');
-  const hang: State = { ...AT_HIPS, trunk: 44 * deep, knee: 30 * deep, forward: -0.052, up: -0.324, hinge: 1 };
+  const hang: State = {
+    ...AT_HIPS,
+    trunk: 44 * deep,
+    knee: 30 * deep,
+    forward: -0.052,
+    up: -0.324,
+    hinge: 1,
+  };
   const racked: State = { ...AT_HIPS, trunk: 2, knee: 5, forward: RACK.forward, up: RACK.up, through: 1 };
   switch (m.kind) {
     case 'lead-in':
@@ -101,14 +119,26 @@ export const hangClean: LiftModel = {
       thoracic: 3 + 20 * rounding + 5 * low,
       gaze: trunk * 0.45,
       shrug: st.shrug,
-      root: { kind: 'balanced', lead: 'right', knee: st.knee + 45 * squat, overX: 0.005 * m.drift[1], carriedKg: m.loadKg * 0.6 },
+      root: {
+        kind: 'balanced',
+        lead: 'right',
+        knee: st.knee + 45 * squat,
+        overX: 0.005 * m.drift[1],
+        carriedKg: m.loadKg * 0.6,
+      },
       legs: stance(0.18 * h, 13, st.heel, 42 * m.dose('knees-fall-in') * st.caught),
       arms: (torso) =>
         bothArms((_side, out) => {
           const pole = blend([-0.35, 0.25, out[2]], RACK_POLE(out), st.through);
           const drop: V3 = [-1.25 * low, -0.7 * low, 0];
           return {
-            wrist: fromShoulders(torso, st.forward * h, (st.up - 0.03 * low) * h, out, m.body.shoulderHalf + 0.028 * h),
+            wrist: fromShoulders(
+              torso,
+              st.forward * h,
+              (st.up - 0.03 * low) * h,
+              out,
+              m.body.shoulderHalf + 0.028 * h,
+            ),
             pole: [pole[0] + drop[0], pole[1] + drop[1], pole[2]],
             handDirection: blend([0.1, -1, 0], RACK_HAND(out), st.through),
             palm: blend([-1, 0, 0], [1, 0.25, 0], st.through),

@@ -79,7 +79,12 @@ export function lowered(m: Moment, first: 'down' | 'up'): number {
 }
 
 /** Both feet side by side, `width` metres apart. */
-export function stance(width: number, toeOut: number, heelLift: number, kneeIn: number): Record<Side, LegPose> {
+export function stance(
+  width: number,
+  toeOut: number,
+  heelLift: number,
+  kneeIn: number,
+): Record<Side, LegPose> {
   const foot = (side: Side): FootPlace => ({ x: 0, z: (width / 2) * sign(side), toeOut, heelLift });
   return {
     left: { kind: 'planted', foot: foot('left'), kneeIn },

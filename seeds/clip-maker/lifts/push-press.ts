@@ -64,7 +64,13 @@ export const pushPress: LiftModel = {
       thoracic: 3 - 9 * flare,
       gaze: trunk * 0.4 - 9 * bump(st.press, 0.02, 0.7) + 3,
       shrug: 0,
-      root: { kind: 'balanced', lead: 'right', knee: st.knee, overX: 0.004 * m.drift[1], carriedKg: m.loadKg * 0.7 },
+      root: {
+        kind: 'balanced',
+        lead: 'right',
+        knee: st.knee,
+        overX: 0.004 * m.drift[1],
+        carriedKg: m.loadKg * 0.7,
+      },
       legs: stance(0.17 * h, 12, st.heel + 20 * heels, 60 * m.dose('knees-fall-in') * st.dip),
       arms: (torso) =>
         bothArms((side, out) => {

@@ -30,14 +30,24 @@ export const splitSquatHold: LiftModel = {
       thoracic: 3 - 8 * flare,
       gaze: trunk * 0.4 + 2,
       shrug: -0.004,
-      root: { kind: 'balanced', lead: 'right', knee: lerp(20, 96, d) + tremble, overX: 0.03 * h, carriedKg: m.loadKg },
+      root: {
+        kind: 'balanced',
+        lead: 'right',
+        knee: lerp(20, 96, d) + tremble,
+        overX: 0.03 * h,
+        carriedKg: m.loadKg,
+      },
       legs: {
         right: {
           kind: 'planted',
           foot: { x: 0.215 * h, z: 0.062 * h, toeOut: 3, heelLift: 24 * m.dose('heels-lift') * d },
           kneeIn: 40 * m.dose('knees-fall-in') * d,
         },
-        left: { kind: 'planted', foot: { x: -0.3 * h, z: -0.062 * h, toeOut: 2, heelLift: lerp(38, 58, d) }, kneeIn: 0 },
+        left: {
+          kind: 'planted',
+          foot: { x: -0.3 * h, z: -0.062 * h, toeOut: 2, heelLift: lerp(38, 58, d) },
+          kneeIn: 0,
+        },
       },
       arms: (torso) =>
         bothArms((side, out) => ({
@@ -50,5 +60,11 @@ export const splitSquatHold: LiftModel = {
   held: (skeleton, m) =>
     m.implement === 'none'
       ? []
-      : inEachHand(skeleton, m.implement === 'kettlebell' ? 'kettlebell' : 'dumbbell', m.loadKg / 2, [1, 0, 0], [0, -1, 0]),
+      : inEachHand(
+          skeleton,
+          m.implement === 'kettlebell' ? 'kettlebell' : 'dumbbell',
+          m.loadKg / 2,
+          [1, 0, 0],
+          [0, -1, 0],
+        ),
 };

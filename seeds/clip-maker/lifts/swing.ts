@@ -55,6 +55,12 @@ function stateOf(m: Moment): State {
   }
 }
 
+/** The arm's angle, held in front of the thighs for as long as the hips have not gone back. */
+function armClearOfBody(m: Moment): number {
+  const { hinge, arm } = stateOf(m);
+  return Math.max(arm, lerp(HANG, BACK, hinge ** 0.8));
+}
+
 /** The two-handed swing: a hinge throws the bell, the arms only hold it. */
 export const swing: LiftModel = {
   id: 'swing',
@@ -68,14 +74,16 @@ export const swing: LiftModel = {
   primaryAngle: 'hipRight',
   camera: STANDING,
   pose: (m) => {
-    const { hinge, arm, top, pull } = stateOf(m);
+    const { hinge, top, pull } = stateOf(m);
+    const arm = armClearOfBody(m);
     const h = m.body.heightM;
     const squat = m.dose('squats-instead-of-hinging');
     const low = m.dose('bell-too-low');
     const deep = hinge * m.depth;
     const rounding = m.dose('rounded-back') * hinge;
     const flare = m.dose('ribs-flare') * top;
-    const trunk = lerp(1, 62 - 34 * squat + 6 * low, deep) - 15 * m.dose('leans-back') * top - 12 * rounding + 8 * flare;
+    const trunk =
+      lerp(1, 62 - 34 * squat + 6 * low, deep) - 15 * m.dose('leans-back') * top - 12 * rounding + 8 * flare;
     return {
       trunk: trunk + 0.4 * m.drift[0],
       lumbar: 22 * rounding - 20 * flare - 1,
@@ -108,5 +116,5 @@ export const swing: LiftModel = {
         }),
     };
   },
-  held: (skeleton, m) => [bellInBothHands(skeleton, sagittal(180 - stateOf(m).arm * 0.97), m.loadKg)],
+  held: (skeleton, m) => [bellInBothHands(skeleton, sagittal(180 - armClearOfBody(m) * 0.97), m.loadKg)],
 };
