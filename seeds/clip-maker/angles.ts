@@ -2,7 +2,7 @@ import type { Implement } from './implements';
 import { SIDES, type Skeleton, sign } from './skeleton';
 import { RIGHT, angleAt, degrees, dot, sub } from './vec';
 
-const SIDED = ['knee', 'hip', 'elbow', 'shoulder', 'ankle', 'footPitch', 'kneeIn'] as const;
+type SidedAngle = 'knee' | 'hip' | 'elbow' | 'shoulder' | 'ankle' | 'footPitch' | 'kneeIn';
 
 /**
  * Angles of the truth file, degrees, true in space (not as seen). `knee`, `hip`, `elbow`, `shoulder` and `ankle` are
@@ -13,12 +13,7 @@ const SIDED = ['knee', 'hip', 'elbow', 'shoulder', 'ankle', 'footPitch', 'kneeIn
  * with the right end low.
  */
 export type AngleName =
-  | `${(typeof SIDED)[number]}${'Left' | 'Right'}`
-  | 'trunkLean'
-  | 'sideLean'
-  | 'spineFlexion'
-  | 'headPitch'
-  | 'barTilt';
+  `${SidedAngle}${'Left' | 'Right'}` | 'trunkLean' | 'sideLean' | 'spineFlexion' | 'headPitch' | 'barTilt';
 
 export type Angles = Record<AngleName, number>;
 

@@ -5,16 +5,7 @@ import { FAULTS } from './faults';
 import { IMPLEMENT_KINDS, type Implement, type ImplementKind, bellRadius } from './implements';
 import { LIFT_IDS } from './lift-ids';
 import { LIFTS, type LiftModel, type Moment } from './lifts';
-import {
-  type ClipOptions,
-  HAIR_STYLES,
-  type Look,
-  OUTFITS,
-  SCENES,
-  SKIN_TONES,
-  type Scene,
-  VIEWS,
-} from './options';
+import { type ClipOptions, type Look, OUTFITS, SCENES, SKIN_TONES, type Scene, VIEWS } from './options';
 import { seeded, wander } from './random';
 import { type Skeleton, solve } from './skeleton';
 import { type Tempo, type Timeline, phaseAt, timelineOf } from './timeline';

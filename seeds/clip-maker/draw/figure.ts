@@ -242,9 +242,7 @@ function drawLeg(mesh: Mesh, body: Body, skeleton: Skeleton, side: Side, look: L
     (s) => (leggings && s < 1.85 ? wear.legs : s > 1.8 ? wear.sock : wear.skin),
     0.94,
   );
-  const split = LEG.findIndex(([s]) => s >= 1);
-  mesh.tube(rings.slice(0, split + 1), PART[`thigh${n}`], 20);
-  mesh.tube(rings.slice(split), PART[`shank${n}`], 20);
+  mesh.tube(rings, PART[`thigh${n}`], 20);
   const hip = j[`hip${n}`];
   const { pelvisFront, pelvisUp } = skeleton.torso;
   // The seat fills the back of the hip whatever the thigh does.
@@ -439,9 +437,7 @@ function drawArm(mesh: Mesh, body: Body, skeleton: Skeleton, side: Side, wear: W
     pole: scale(skeleton.elbowPole[side], -1),
   };
   const rings = limbRings(limb, ARM, size, () => wear.skin, 0.97);
-  const split = ARM.findIndex(([s]) => s >= 1);
-  mesh.tube(rings.slice(0, split + 1), PART[`upperArm${n}`], 18);
-  mesh.tube(rings.slice(split), PART[`forearm${n}`], 18);
+  mesh.tube(rings, PART[`upperArm${n}`], 18);
   const sleeve = shellOf(
     rings,
     ARM,
@@ -455,7 +451,7 @@ function drawArm(mesh: Mesh, body: Body, skeleton: Skeleton, side: Side, wear: W
   mesh.ellipsoid(
     shoulder,
     [chestFront, chestUp, skeleton.right],
-    [0.036 * size, 0.0355 * size, 0.0365 * size],
+    [0.0355 * size, 0.0315 * size, 0.034 * size],
     wear.shirt,
     PART.torso,
     8,

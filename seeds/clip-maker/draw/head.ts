@@ -145,7 +145,6 @@ export function drawHead(mesh: Mesh, body: Body, skeleton: Skeleton, look: Look,
     // Upper lid and brow.
     dab(place(0.0437, 0.0102, 0.0174 * way), [0.0042, 0.0024, 0.0092], wear.lip);
     dab(place(0.0448, 0.0185, 0.0185 * way), [0.0034, 0.0023, 0.0112], wear.hair);
-    dab(place(0.0405, -0.012, 0.0215 * way), [0.0068, 0.0075, 0.0095], wear.skin);
     dab(place(0.0535, -0.0165, 0.0052 * way), [0.0042, 0.0038, 0.0042], wear.skin);
   }
   dab(place(0.0505, -0.004), [0.0075, 0.018, 0.0052], wear.skin, 8, 12);
