@@ -1,0 +1,1 @@
+export { createAuthenticate, createSessions, endAllSessions, type PublicSession, type Sessions } from './sessions-service';
