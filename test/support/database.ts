@@ -5,6 +5,7 @@ import { join } from 'node:path';
 import { promisify } from 'node:util';
 import { createConnection } from 'mysql2/promise';
 import { projectDir } from '../../server/start/project';
+import { serviceEnvironment } from './environment';
 import { type ServiceAddresses } from './services';
 
 const run = promisify(execFile);
@@ -52,7 +53,7 @@ async function templateFile(services: ServiceAddresses): Promise<string> {
   const migrated = await createEmptyDatabase(services);
   await run(process.execPath, ['--import', 'tsx', join('server', 'platform', 'migrate.ts')], {
     cwd: projectDir,
-    env: { ...process.env, DATABASE_URL: migrated.url },
+    env: serviceEnvironment(services, migrated.url),
   });
   const unfinished = `${file}.${migrated.name}`;
   await run(

@@ -1,0 +1,2 @@
+export { addGym, createGyms, gymOf, type GymsService } from './gyms-service';
+export { registerGymsRoutes } from './gyms-routes';
