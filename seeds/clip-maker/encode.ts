@@ -48,7 +48,7 @@ export function encodeArgs(
           'log-level=error',
         ]
       : ['-c:v', 'libx264', '-preset', 'veryfast', '-crf', '22'];
-  const rotated = file.storedRotated ? ['-vf', 'transpose=cclock', '-metadata:s:v:0', 'rotate=90'] : [];
+  const rotated = file.storedRotated ? ['-vf', 'transpose=cclock'] : [];
   const place = file.location ? iso6709(file.location) : undefined;
   const tags = [
     ...(place ? ['-metadata', `location=${place}`] : []),
@@ -85,6 +85,39 @@ const iso6709 = ({ latitude, longitude }: { latitude: number; longitude: number 
   return `${part(latitude, 2)}${part(longitude, 3)}/`;
 };
 
+/** Adds the display matrix that stands the picture up; ffmpeg 5 writes one only while copying. */
+async function standUp(path: string, file: FileOptions): Promise<void> {
+  const turned = `${path}.turned`;
+  const keep = file.device || file.location ? '+faststart+use_metadata_tags' : '+faststart';
+  const format = file.codec === 'hevc' ? ['-tag:v', 'hvc1', '-f', 'mov'] : ['-f', 'mp4'];
+  const args = [
+    '-hide_banner',
+    '-loglevel',
+    'error',
+    '-nostdin',
+    '-y',
+    '-i',
+    path,
+    '-map',
+    '0',
+    '-c',
+    'copy',
+  ];
+  const child = spawn(
+    FFMPEG,
+    [...args, '-metadata:s:v:0', 'rotate=90', '-movflags', keep, ...format, turned],
+    {
+      stdio: 'ignore',
+    },
+  );
+  const [code] = (await once(child, 'close')) as [number | null];
+  if (code !== 0) {
+    await rm(turned, { force: true });
+    throw new Error(`ffmpeg could not turn ${path}: exit code ${code ?? 'none'}`);
+  }
+  await rename(turned, path);
+}
+
 /** Pipes the pictures into ffmpeg; the file appears under its name only when whole. Throws with ffmpeg's own words. */
 export async function encode(pictures: Pictures, file: FileOptions, outPath: string): Promise<void> {
   const unfinished = `${outPath}.part`;
@@ -109,6 +142,7 @@ export async function encode(pictures: Pictures, file: FileOptions, outPath: str
     const [code] = await closed;
     if (code !== 0 || broken)
       throw new Error(`ffmpeg could not write ${outPath}: ${said.trim() || String(broken ?? code)}`);
+    if (file.storedRotated) await standUp(unfinished, file);
     await rename(unfinished, outPath);
   } catch (error) {
     child.kill('SIGKILL');
