@@ -48,7 +48,7 @@ export function encodeArgs(
           'log-level=error',
         ]
       : ['-c:v', 'libx264', '-preset', 'veryfast', '-crf', '22'];
-  const rotated = file.storedRotated ? ['-vf', 'transpose=cclock'] : [];
+  const rotated = file.storedRotated ? ['-vf', 'transpose=clock'] : [];
   const place = file.location ? iso6709(file.location) : undefined;
   const tags = [
     ...(place ? ['-metadata', `location=${place}`] : []),
