@@ -6,4 +6,9 @@ export const ROUTES_ANSWERS: Routes = [
     title: 'Answers',
     loadComponent: () => import('./answers-page').then((m) => m.AnswersPage),
   },
+  {
+    path: ':takeId',
+    title: 'Answer',
+    loadComponent: () => import('./answer-page').then((m) => m.AnswerPage),
+  },
 ];
