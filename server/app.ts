@@ -5,14 +5,16 @@ import helmet from 'helmet';
 import { pinoHttp } from 'pino-http';
 import { answersOf, createAnswers, registerAnswersRoutes } from './modules/answers';
 import { createAssignments, registerAssignmentsRoutes } from './modules/assignments';
-import { createAuth, createAuthenticate, registerAuthRoutes } from './modules/auth';
+import { createAuth, registerAuthRoutes } from './modules/auth';
 import { createClips, registerClipsRoutes } from './modules/clips';
 import { createGyms, registerGymsRoutes } from './modules/gyms';
 import { createLifts, registerLiftsRoutes } from './modules/lifts';
 import { createNotices, registerNoticesRoutes } from './modules/notices';
 import { createMetrics, registerEventStreamRoutes, registerOperationsRoutes } from './modules/operations';
-import { createPeople, registerPeopleRoutes } from './modules/people';
-import { createQueue, registerQueueRoutes } from './modules/queue';
+import { createInvitations, createPeople, registerPeopleRoutes } from './modules/people';
+import { createPrivacy, registerPrivacyRoutes } from './modules/privacy';
+import { createQueue, registerQueueRoutes, releaseAll } from './modules/queue';
+import { createAuthenticate, createSessions } from './modules/sessions';
 import { createTakes, registerTakesRoutes } from './modules/takes';
 import { createTurnaround, registerTurnaroundRoutes } from './modules/turnaround';
 import { serveClient } from './platform/http/client-files';
@@ -43,9 +45,22 @@ export function buildApp(platform: Platform, mailer: Mailer): App {
   const metrics = createMetrics(platform);
 
   const takes = createTakes(platform, { answersOf });
-  registerAuthRoutes(routes, createAuth(platform), cookies);
+  const sessions = createSessions(platform);
+  registerAuthRoutes(routes, { auth: createAuth(platform, sessions), sessions }, cookies);
   registerGymsRoutes(routes, createGyms(platform));
-  registerPeopleRoutes(routes, createPeople(platform), cookies);
+  registerPeopleRoutes(
+    routes,
+    {
+      people: createPeople(platform, { putBackAll: releaseAll }),
+      invitations: createInvitations(platform, sessions),
+    },
+    cookies,
+  );
+  registerPrivacyRoutes(
+    routes,
+    createPrivacy(platform, { detailOf: takes.get, putBackAll: releaseAll }),
+    cookies,
+  );
   registerLiftsRoutes(routes, createLifts(platform));
   registerAssignmentsRoutes(routes, createAssignments(platform, { takesOf: takes.takesOf }));
   registerTakesRoutes(routes, takes);

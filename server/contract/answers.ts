@@ -47,7 +47,7 @@ export const NewComment = z
     faultId: Id.nullish(),
   })
   .strict()
-  .refine((comment) => comment.endMs == null || comment.endMs > comment.atMs, {
+  .refine((comment) => (comment.endMs ?? comment.atMs + 1) > comment.atMs, {
     message: 'A span ends after it starts.',
     path: ['endMs'],
   });
@@ -154,7 +154,7 @@ export const NewAnswer = z
     refilm: RefilmInput.nullish(),
   })
   .strict()
-  .refine((answer) => answer.call !== 'scale' || answer.scaleId != null, {
+  .refine((answer) => answer.call !== 'scale' || (answer.scaleId ?? null) !== null, {
     message: 'Choose the scale to use.',
     path: ['scaleId'],
   });

@@ -45,11 +45,7 @@ export async function insertGym(db: Database | Transaction, gym: GymDto, now: Da
   });
 }
 
-export async function updateGym(
-  db: Database | Transaction,
-  gymId: string,
-  change: GymChange,
-): Promise<void> {
+export async function updateGym(db: Database | Transaction, gymId: string, change: GymChange): Promise<void> {
   await db('gyms')
     .where({ id: gymId })
     .update({

@@ -83,3 +83,25 @@ export async function insertNotices(
     })),
   );
 }
+
+/**
+ * Deletes what was told to a person, what was told to others about the takes named, and mails to the address
+ * that are still kept.
+ */
+export async function forgetNotices(
+  trx: Transaction,
+  gymId: string,
+  person: { readonly userId: string; readonly email: string; readonly takeIds: readonly string[] },
+): Promise<void> {
+  await trx('notifications').where({ gym_id: gymId, user_id: person.userId }).delete();
+  for (const takeId of person.takeIds) {
+    await trx('notifications')
+      .where('gym_id', gymId)
+      .whereIn('link', [`/board/${takeId}`, `/answers/${takeId}`])
+      .delete();
+  }
+  await trx('jobs')
+    .where('type', 'mail.send')
+    .whereRaw("JSON_VALUE(payload, '$.to') = ?", [person.email])
+    .delete();
+}

@@ -1,8 +1,11 @@
 export { isUnderage } from './age';
 export { createInvitations, type Invitations } from './invitations-service';
+export { deleteInvitations } from './invitations-repository';
 export { mustBeGoodPassword } from './password-rules';
 export {
+  anonymiseUser,
   contactOf,
+  credentialsByEmail,
   emailIsTaken,
   findUser,
   insertUser,

@@ -39,7 +39,9 @@ const toInvitation = (row: Row): Invitation => ({
 const invitations = (db: Db) =>
   db('invitations')
     .join('gyms', 'gyms.id', 'invitations.gym_id')
-    .join('users', (on) => on.on('users.gym_id', 'invitations.gym_id').andOn('users.id', 'invitations.invited_by'))
+    .join('users', (on) =>
+      on.on('users.gym_id', 'invitations.gym_id').andOn('users.id', 'invitations.invited_by'),
+    )
     .select('invitations.*', 'gyms.name as gym_name', 'users.name as inviter');
 
 /** The token is the key here: who holds it is told the gym, so no gym id is asked for. */
@@ -85,7 +87,12 @@ export async function insertInvitation(trx: Transaction, row: NewInvitationRow, 
 }
 
 /** Withdraws what is open: one invitation by id, or all to an address. @returns how many */
-export async function withdrawOpen(db: Db, gymId: string, which: { id: string } | { email: string }, now: Date): Promise<number> {
+export async function withdrawOpen(
+  db: Db,
+  gymId: string,
+  which: { id: string } | { email: string },
+  now: Date,
+): Promise<number> {
   return db('invitations')
     .where({ gym_id: gymId, ...which })
     .whereNull('accepted_at')
@@ -95,4 +102,9 @@ export async function withdrawOpen(db: Db, gymId: string, which: { id: string } 
 
 export async function setAccepted(trx: Transaction, gymId: string, id: string, now: Date): Promise<void> {
   await trx('invitations').where({ gym_id: gymId, id }).update({ accepted_at: now });
+}
+
+/** Deletes the invitations that carried an address. */
+export async function deleteInvitations(trx: Transaction, gymId: string, email: string): Promise<void> {
+  await trx('invitations').where({ gym_id: gymId, email }).delete();
 }

@@ -19,7 +19,11 @@ export interface Invitations {
   invite(actor: Actor, invitee: { email: string; name: string; role: Role }): Promise<InvitationDto>;
   withdraw(actor: Actor, id: string): Promise<void>;
   open(token: string): Promise<InvitationDto>;
-  accept(token: string, given: { password: string; bornOn?: string }, device: string): Promise<{ session: SessionDto; tokens: SessionTokens }>;
+  accept(
+    token: string,
+    given: { password: string; bornOn?: string },
+    device: string,
+  ): Promise<{ session: SessionDto; tokens: SessionTokens }>;
 }
 
 const taken = () =>
@@ -27,9 +31,24 @@ const taken = () =>
 
 function mustBeOpen(invitation: repository.Invitation | null, now: Date): repository.Invitation {
   if (!invitation) throw notFound('That invitation');
-  if (invitation.acceptedAt) throw new AppError(410, 'invitation-used', 'This invitation was accepted already. Sign in with your password.');
-  if (invitation.withdrawn) throw new AppError(410, 'invitation-withdrawn', 'This invitation was replaced or withdrawn. Use the newest mail, or ask your gym for a new one.');
-  if (new Date(invitation.expiresAt) <= now) throw new AppError(410, 'invitation-expired', 'This invitation is older than seven days. Ask your gym for a new one.');
+  if (invitation.acceptedAt)
+    throw new AppError(
+      410,
+      'invitation-used',
+      'This invitation was accepted already. Sign in with your password.',
+    );
+  if (invitation.withdrawn)
+    throw new AppError(
+      410,
+      'invitation-withdrawn',
+      'This invitation was replaced or withdrawn. Use the newest mail, or ask your gym for a new one.',
+    );
+  if (new Date(invitation.expiresAt) <= now)
+    throw new AppError(
+      410,
+      'invitation-expired',
+      'This invitation is older than seven days. Ask your gym for a new one.',
+    );
   return invitation;
 }
 
@@ -59,9 +78,19 @@ export function createInvitations(platform: Platform, sessions: Sessions): Invit
         await repository.insertInvitation(trx, row, now);
         const gym = await gymOf(trx, actor.gymId);
         const link = `${config.publicUrl}/invitation/${token}`;
-        const mail = mails.invitation({ gymName: gym.name, invitedBy: actor.name, name: invitee.name, role: invitee.role, link });
+        const mail = mails.invitation({
+          gymName: gym.name,
+          invitedBy: actor.name,
+          name: invitee.name,
+          role: invitee.role,
+          link,
+        });
         await sendMailLater(trx, email, mail, now);
-        await recordEvent(trx, { gymId: actor.gymId, type: 'people.changed', actorId: actor.userId, to: { staff: true } }, now);
+        await recordEvent(
+          trx,
+          { gymId: actor.gymId, type: 'people.changed', actorId: actor.userId, to: { staff: true } },
+          now,
+        );
         return {
           ...row,
           gymName: gym.name,
@@ -75,8 +104,13 @@ export function createInvitations(platform: Platform, sessions: Sessions): Invit
 
     async withdraw(actor, id) {
       const now = clock.now();
-      if ((await repository.withdrawOpen(database, actor.gymId, { id }, now)) === 0) throw notFound('That invitation');
-      await recordEvent(database, { gymId: actor.gymId, type: 'people.changed', actorId: actor.userId, to: { staff: true } }, now);
+      if ((await repository.withdrawOpen(database, actor.gymId, { id }, now)) === 0)
+        throw notFound('That invitation');
+      await recordEvent(
+        database,
+        { gymId: actor.gymId, type: 'people.changed', actorId: actor.userId, to: { staff: true } },
+        now,
+      );
     },
 
     async open(token) {
@@ -93,7 +127,19 @@ export function createInvitations(platform: Platform, sessions: Sessions): Invit
           const invitation = mustBeOpen(await repository.findByToken(trx, hashSecret(token), true), now);
           const { gymId } = invitation;
           const id = newId();
-          await insertUser(trx, { id, gymId, name: invitation.name, email: invitation.email, role: invitation.role, passwordHash, bornOn: given.bornOn ?? null }, now);
+          await insertUser(
+            trx,
+            {
+              id,
+              gymId,
+              name: invitation.name,
+              email: invitation.email,
+              role: invitation.role,
+              passwordHash,
+              bornOn: given.bornOn ?? null,
+            },
+            now,
+          );
           await repository.setAccepted(trx, gymId, invitation.id, now);
           await recordEvent(trx, { gymId, type: 'people.changed', actorId: id, to: { staff: true } }, now);
           const [user, gym] = [await findUser(trx, gymId, id, now), await gymOf(trx, gymId)];

@@ -23,17 +23,26 @@ describe('a new password', () => {
     expect(weaknessOf('lanterns over the quiet slip', CONTEXT)).toBeNull();
   });
 
-  it.each([['passwordpassword'], ['Correct Horse Battery Staple'], ['1q2w3e4r5t6y7u8i']])('refuses %s, which guessers try first', (password) => {
-    expect(weaknessOf(password, CONTEXT)).toContain('guessers try first');
-  });
+  it.each([['passwordpassword'], ['Correct Horse Battery Staple'], ['1q2w3e4r5t6y7u8i']])(
+    'refuses %s, which guessers try first',
+    (password) => {
+      expect(weaknessOf(password, CONTEXT)).toContain('guessers try first');
+    },
+  );
 
-  it.each([['aaaaaaaaaaaaaaaaaa'], ['abcabcabcabcabcabc'], ['qwertyuiopasdfghj']])('refuses the pattern %s', (password) => {
-    expect(weaknessOf(password, CONTEXT)).toContain('pattern');
-  });
+  it.each([['aaaaaaaaaaaaaaaaaa'], ['abcabcabcabcabcabc'], ['qwertyuiopasdfghj']])(
+    'refuses the pattern %s',
+    (password) => {
+      expect(weaknessOf(password, CONTEXT)).toContain('pattern');
+    },
+  );
 
-  it.each([['slipwaystrength2026'], ['Maren Oduya Maren 1'], ['midfoot midfoot 26']])('refuses %s, mostly known words (ASVS 6.2.11)', (password) => {
-    expect(weaknessOf(password, CONTEXT)).not.toBeNull();
-  });
+  it.each([['slipwaystrength2026'], ['Maren Oduya Maren 1'], ['midfoot midfoot 26']])(
+    'refuses %s, mostly known words (ASVS 6.2.11)',
+    (password) => {
+      expect(weaknessOf(password, CONTEXT)).not.toBeNull();
+    },
+  );
 
   it('allows a known word within enough of one’s own', () => {
     expect(weaknessOf('strength comes from herring', CONTEXT)).toBeNull();

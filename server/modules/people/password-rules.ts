@@ -2,7 +2,11 @@ import { malformed } from '../../platform/errors';
 import { COMMON_PASSWORDS } from './common-passwords';
 
 /** Letters and digits alone, lower case: what a guesser tries first survives spaces and capitals. */
-const bare = (value: string) => value.normalize('NFKC').toLowerCase().replace(/[^\p{L}\p{N}]/gu, '');
+const bare = (value: string) =>
+  value
+    .normalize('NFKC')
+    .toLowerCase()
+    .replace(/[^\p{L}\p{N}]/gu, '');
 
 /** How much of a password a word of the context may make up before the rest is too little to guess at. */
 const OWN_CHARACTERS = 8;
@@ -17,7 +21,12 @@ function isOnePatternRepeated(value: string): boolean {
   return false;
 }
 
-const SEQUENCES = ['01234567890123456789', 'abcdefghijklmnopqrstuvwxyz', 'qwertyuiopasdfghjklzxcvbnm', '1qaz2wsx3edc4rfv5tgb6yhn'];
+const SEQUENCES = [
+  '01234567890123456789',
+  'abcdefghijklmnopqrstuvwxyz',
+  'qwertyuiopasdfghjklzxcvbnm',
+  '1qaz2wsx3edc4rfv5tgb6yhn',
+];
 const isSequence = (value: string) =>
   SEQUENCES.some((sequence) => sequence.includes(value) || [...sequence].reverse().join('').includes(value));
 
@@ -28,12 +37,18 @@ const isSequence = (value: string) =>
  */
 export function weaknessOf(password: string, context: readonly string[]): string | null {
   const value = bare(password);
-  if (COMMON.has(value)) return 'This password is on the lists that guessers try first. Use a few words of your own.';
+  if (COMMON.has(value))
+    return 'This password is on the lists that guessers try first. Use a few words of your own.';
   if (value.length > 0 && (isOnePatternRepeated(value) || isSequence(value))) {
     return 'This password repeats one pattern. Use a few words of your own.';
   }
-  const words = [...context, 'midfoot', 'password'].flatMap((words_) => [words_, ...words_.split(/[\s@._-]+/)]).map(bare).filter((word) => word.length >= 4);
-  const rest = words.sort((a, b) => b.length - a.length).reduce((left, word) => left.replaceAll(word, ''), value);
+  const words = [...context, 'midfoot', 'password']
+    .flatMap((words_) => [words_, ...words_.split(/[\s@._-]+/)])
+    .map(bare)
+    .filter((word) => word.length >= 4);
+  const rest = words
+    .sort((a, b) => b.length - a.length)
+    .reduce((left, word) => left.replaceAll(word, ''), value);
   if (rest !== value && rest.length < OWN_CHARACTERS) {
     return 'This password is mostly your name, your gym or your address. Use a few words of your own.';
   }

@@ -37,12 +37,19 @@ const toUser = (row: Row, now: Date): UserDto => ({
 });
 
 export async function findUser(db: Db, gymId: string, userId: string, now: Date): Promise<UserDto | null> {
-  const row: Row | undefined = await db('users').where({ gym_id: gymId, id: userId }).whereNull('erased_at').first();
+  const row: Row | undefined = await db('users')
+    .where({ gym_id: gymId, id: userId })
+    .whereNull('erased_at')
+    .first();
   return row ? toUser(row, now) : null;
 }
 
 export async function listUsers(db: Db, gymId: string, now: Date): Promise<UserDto[]> {
-  const rows: Row[] = await db('users').where({ gym_id: gymId }).whereNull('erased_at').orderBy('name').orderBy('id');
+  const rows: Row[] = await db('users')
+    .where({ gym_id: gymId })
+    .whereNull('erased_at')
+    .orderBy('name')
+    .orderBy('id');
   return rows.map((row) => toUser(row, now));
 }
 
@@ -84,17 +91,15 @@ export interface UserChange {
 
 /** Changes what is given; what is undefined stays. @returns whether the person is of this gym */
 export async function updateUser(db: Db, gymId: string, userId: string, change: UserChange): Promise<void> {
-  await db('users')
-    .where({ gym_id: gymId, id: userId })
-    .update({
-      name: change.name,
-      kit: change.kit,
-      role: change.role,
-      active: change.active,
-      password_hash: change.passwordHash,
-      // One column is always set, so that an empty change is still a valid statement.
-      gym_id: gymId,
-    });
+  await db('users').where({ gym_id: gymId, id: userId }).update({
+    name: change.name,
+    kit: change.kit,
+    role: change.role,
+    active: change.active,
+    password_hash: change.passwordHash,
+    // One column is always set, so that an empty change is still a valid statement.
+    gym_id: gymId,
+  });
 }
 
 export async function setGuardianConsent(
@@ -104,9 +109,11 @@ export async function setGuardianConsent(
   consent: { guardianName: string; recordedBy: string },
   now: Date,
 ): Promise<void> {
-  await db('users')
-    .where({ gym_id: gymId, id: userId })
-    .update({ guardian_name: consent.guardianName, guardian_recorded_by: consent.recordedBy, guardian_consent_at: now });
+  await db('users').where({ gym_id: gymId, id: userId }).update({
+    guardian_name: consent.guardianName,
+    guardian_recorded_by: consent.recordedBy,
+    guardian_consent_at: now,
+  });
 }
 
 /** Active owners beside one person. */
@@ -123,13 +130,19 @@ export async function countOtherOwners(db: Db, gymId: string, userId: string): P
 export async function names(db: Db, gymId: string, ids: readonly string[]): Promise<Map<string, Person>> {
   const wanted = [...new Set(ids)];
   if (wanted.length === 0) return new Map();
-  const rows: Person[] = await db('users').where({ gym_id: gymId }).whereIn('id', wanted).select('id', 'name');
+  const rows: Person[] = await db('users')
+    .where({ gym_id: gymId })
+    .whereIn('id', wanted)
+    .select('id', 'name');
   return new Map(rows.map((row) => [row.id, row]));
 }
 
 /** Active coaches and owners. */
 export async function staffOf(db: Db, gymId: string): Promise<Person[]> {
-  return db('users').where({ gym_id: gymId, active: true }).whereIn('role', ['coach', 'owner']).select('id', 'name');
+  return db('users')
+    .where({ gym_id: gymId, active: true })
+    .whereIn('role', ['coach', 'owner'])
+    .select('id', 'name');
 }
 
 /** Active members; of the given ids when some are named. */
@@ -140,7 +153,11 @@ export async function membersOf(db: Db, gymId: string, ids?: readonly string[]):
 }
 
 /** Where to write to an active person; null when there is nobody to write to. */
-export async function contactOf(db: Db, gymId: string, userId: string): Promise<{ name: string; email: string } | null> {
+export async function contactOf(
+  db: Db,
+  gymId: string,
+  userId: string,
+): Promise<{ name: string; email: string } | null> {
   const row: { name: string; email: string } | undefined = await db('users')
     .where({ gym_id: gymId, id: userId, active: true })
     .whereNull('erased_at')
@@ -150,6 +167,58 @@ export async function contactOf(db: Db, gymId: string, userId: string): Promise<
 
 /** The stored hash of a person's password. */
 export async function passwordHashOf(db: Db, gymId: string, userId: string): Promise<string | null> {
-  const row: { password_hash: string } | undefined = await db('users').where({ gym_id: gymId, id: userId }).first('password_hash');
+  const row: { password_hash: string } | undefined = await db('users')
+    .where({ gym_id: gymId, id: userId })
+    .first('password_hash');
   return row?.password_hash ?? null;
+}
+
+export interface Credentials {
+  readonly gymId: string;
+  readonly userId: string;
+  readonly name: string;
+  readonly email: string;
+  readonly passwordHash: string;
+}
+
+/** The active account of an address, in whichever gym: one address is one account. */
+export async function credentialsByEmail(db: Db, email: string): Promise<Credentials | null> {
+  const row: { gym_id: string; id: string; name: string; email: string; password_hash: string } | undefined =
+    await db('users')
+      .where({ email: email.trim().toLowerCase(), active: true })
+      .whereNull('erased_at')
+      .first('gym_id', 'id', 'name', 'email', 'password_hash');
+  return row
+    ? {
+        gymId: row.gym_id,
+        userId: row.id,
+        name: row.name,
+        email: row.email,
+        passwordHash: row.password_hash,
+      }
+    : null;
+}
+
+/** Leaves of a person only what the gym's records hang on: an id without a name, an address or a way in. */
+export async function anonymiseUser(
+  trx: Transaction,
+  gymId: string,
+  userId: string,
+  name: string,
+  now: Date,
+): Promise<void> {
+  await trx('users')
+    .where({ gym_id: gymId, id: userId })
+    .update({
+      name,
+      email: `erased-${userId}@erased.invalid`,
+      active: false,
+      password_hash: '',
+      born_on: null,
+      kit: null,
+      guardian_name: null,
+      guardian_consent_at: null,
+      guardian_recorded_by: null,
+      erased_at: now,
+    });
 }

@@ -5,11 +5,19 @@ import type { Routes } from '../../platform/http/routes';
 import type { Invitations } from './invitations-service';
 import type { People } from './people-service';
 
-export function registerPeopleRoutes(routes: Routes, services: { people: People; invitations: Invitations }, cookies: CookieNames): void {
+export function registerPeopleRoutes(
+  routes: Routes,
+  services: { people: People; invitations: Invitations },
+  cookies: CookieNames,
+): void {
   const { people, invitations } = services;
   routes.guarded(accountRoutes.listPeople, ({ actor }) => people.list(actor));
-  routes.guarded(accountRoutes.changePerson, ({ actor, params, body }) => people.change(actor, params.id, body));
-  routes.guarded(accountRoutes.recordGuardianConsent, ({ actor, params, body }) => people.recordConsent(actor, params.id, body.guardianName));
+  routes.guarded(accountRoutes.changePerson, ({ actor, params, body }) =>
+    people.change(actor, params.id, body),
+  );
+  routes.guarded(accountRoutes.recordGuardianConsent, ({ actor, params, body }) =>
+    people.recordConsent(actor, params.id, body.guardianName),
+  );
   routes.guarded(accountRoutes.invite, ({ actor, body }) => invitations.invite(actor, body));
   routes.guarded(accountRoutes.withdrawInvitation, async ({ actor, params }) => {
     await invitations.withdraw(actor, params.id);

@@ -16,7 +16,11 @@ export interface PeopleDeps {
 
 export interface People {
   list(actor: Actor): Promise<{ items: UserDto[]; invitations: Invitation[] }>;
-  change(actor: Actor, userId: string, change: { role?: UserDto['role']; active?: boolean }): Promise<UserDto>;
+  change(
+    actor: Actor,
+    userId: string,
+    change: { role?: UserDto['role']; active?: boolean },
+  ): Promise<UserDto>;
   recordConsent(actor: Actor, userId: string, guardianName: string): Promise<UserDto>;
 }
 
@@ -30,7 +34,11 @@ export function createPeople(platform: Platform, deps: PeopleDeps): People {
   const { database, clock } = platform;
 
   const changed = async (trx: Transaction, actor: Actor, userId: string, now: Date): Promise<UserDto> => {
-    await recordEvent(trx, { gymId: actor.gymId, type: 'people.changed', actorId: actor.userId, to: { staff: true, userId } }, now);
+    await recordEvent(
+      trx,
+      { gymId: actor.gymId, type: 'people.changed', actorId: actor.userId, to: { staff: true, userId } },
+      now,
+    );
     const user = await repository.findUser(trx, actor.gymId, userId, now);
     if (!user) throw notFound('That person');
     return user;
@@ -53,11 +61,13 @@ export function createPeople(platform: Platform, deps: PeopleDeps): People {
         await gymOf(trx, actor.gymId, true);
         const user = await repository.findUser(trx, actor.gymId, userId, now);
         if (!user) throw notFound('That person');
-        const leavesOwnership = user.role === 'owner' && (change.active === false || (change.role ?? 'owner') !== 'owner');
+        const leavesOwnership =
+          user.role === 'owner' && (change.active === false || (change.role ?? 'owner') !== 'owner');
         if (leavesOwnership) await mustNotBeLastOwner(trx, actor.gymId, userId);
         await repository.updateUser(trx, actor.gymId, userId, change);
         if (change.active === false) await endAllSessions(trx, actor.gymId, userId, now);
-        if (change.active === false || change.role === 'member') await deps.putBackAll(trx, actor.gymId, userId, now);
+        if (change.active === false || change.role === 'member')
+          await deps.putBackAll(trx, actor.gymId, userId, now);
         return changed(trx, actor, userId, now);
       }),
 
@@ -67,7 +77,13 @@ export function createPeople(platform: Platform, deps: PeopleDeps): People {
         const user = await repository.findUser(trx, actor.gymId, userId, now);
         if (!user) throw notFound('That person');
         if (user.role !== 'member') throw refused('not-a-member', 'Consent is recorded for members.');
-        await repository.setGuardianConsent(trx, actor.gymId, userId, { guardianName, recordedBy: actor.userId }, now);
+        await repository.setGuardianConsent(
+          trx,
+          actor.gymId,
+          userId,
+          { guardianName, recordedBy: actor.userId },
+          now,
+        );
         return changed(trx, actor, userId, now);
       }),
   };

@@ -1,3 +1,3 @@
-export { PICK_UP_MS, endLease, heldTake, sweepLapsed, takeLease } from './leases';
+export { PICK_UP_MS, endLease, heldTake, releaseAll, sweepLapsed, takeLease } from './leases';
 export { registerQueueRoutes } from './queue-routes';
 export { createQueue, type QueueService } from './queue-service';

@@ -3,7 +3,7 @@ import { conflict } from '../../platform/errors';
 import type { Actor } from '../../platform/http/actor';
 import { names } from '../people';
 import { holderOf, lockedTake, tellTake, type TakeRow } from '../takes';
-import { lapsedLeases, lastHolder, setLease } from './queue-repository';
+import { lapsedLeases, lastHolder, leasesOf, setLease } from './queue-repository';
 
 /** A pick-up holds this long without being renewed, so that a closed laptop never blocks a clip, ms. */
 export const PICK_UP_MS = 90_000;
@@ -71,6 +71,16 @@ export async function endLease(trx: Transaction, actor: Actor, take: TakeRow, no
   if (take.state !== 'waiting' || take.pickedUpBy !== actor.userId) return;
   await setLease(trx, take.gymId, take.id, null);
   await tellTake(trx, take, 'take.put-back', actor.userId, now);
+}
+
+/** Returns to the queue what a coach has picked up, in the caller's transaction. */
+export async function releaseAll(trx: Transaction, gymId: string, userId: string, now: Date): Promise<void> {
+  for (const takeId of await leasesOf(trx, gymId, userId)) {
+    const take = await lockedTake(trx, gymId, takeId);
+    if (take.state !== 'waiting' || take.pickedUpBy !== userId) continue;
+    await setLease(trx, gymId, takeId, null);
+    await tellTake(trx, take, 'take.put-back', userId, now);
+  }
 }
 
 /**

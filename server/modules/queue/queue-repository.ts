@@ -139,3 +139,11 @@ export async function lapsedLeases(db: Database, now: Date): Promise<{ gymId: st
     .select('gym_id', 'id');
   return rows.map((row) => ({ gymId: row.gym_id, takeId: row.id }));
 }
+
+/** The waiting takes that a coach has picked up. */
+export async function leasesOf(db: Db, gymId: string, userId: string): Promise<string[]> {
+  const rows: { id: string }[] = await db('takes')
+    .where({ gym_id: gymId, state: 'waiting', picked_up_by: userId })
+    .select('id');
+  return rows.map((row) => row.id);
+}

@@ -1,1 +1,8 @@
-export { createAuthenticate, createSessions, endAllSessions, type PublicSession, type Sessions } from './sessions-service';
+export { deleteSessions } from './sessions-repository';
+export {
+  createAuthenticate,
+  createSessions,
+  endAllSessions,
+  type PublicSession,
+  type Sessions,
+} from './sessions-service';

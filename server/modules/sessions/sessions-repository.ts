@@ -46,7 +46,12 @@ export async function insertSession(db: Db, session: SessionRow): Promise<void> 
   });
 }
 
-export async function insertRefreshToken(db: Db, tokenHash: Buffer, sessionId: string, now: Date): Promise<void> {
+export async function insertRefreshToken(
+  db: Db,
+  tokenHash: Buffer,
+  sessionId: string,
+  now: Date,
+): Promise<void> {
   await db('refresh_tokens').insert({ token_hash: tokenHash, session_id: sessionId, created_at: now });
 }
 
@@ -72,7 +77,12 @@ export async function markRefreshUsed(trx: Transaction, tokenHash: Buffer, now: 
   await trx('refresh_tokens').where('token_hash', tokenHash).whereNull('used_at').update({ used_at: now });
 }
 
-export async function touchSession(trx: Transaction, gymId: string, sessionId: string, now: Date): Promise<void> {
+export async function touchSession(
+  trx: Transaction,
+  gymId: string,
+  sessionId: string,
+  now: Date,
+): Promise<void> {
   await trx('sessions').where({ gym_id: gymId, id: sessionId }).update({ last_used_at: now });
 }
 
@@ -107,10 +117,19 @@ export async function findActor(
 ): Promise<Actor | null> {
   const row: { role: Role; name: string } | undefined = await db('sessions')
     .join('users', (on) => on.on('users.gym_id', 'sessions.gym_id').andOn('users.id', 'sessions.user_id'))
-    .where({ 'sessions.id': claims.sessionId, 'sessions.gym_id': claims.gymId, 'sessions.user_id': claims.userId })
+    .where({
+      'sessions.id': claims.sessionId,
+      'sessions.gym_id': claims.gymId,
+      'sessions.user_id': claims.userId,
+    })
     .andWhere('users.active', true)
     .whereNull('sessions.ended_at')
     .andWhere('sessions.expires_at', '>', now)
     .first('users.role', 'users.name');
   return row ? { ...claims, role: row.role, name: row.name } : null;
+}
+
+/** Deletes every trace of a person's sessions: devices and times of use too. */
+export async function deleteSessions(trx: Transaction, gymId: string, userId: string): Promise<void> {
+  await trx('sessions').where({ gym_id: gymId, user_id: userId }).delete();
 }

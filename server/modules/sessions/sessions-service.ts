@@ -46,10 +46,18 @@ export interface Sessions {
 export function createSessions(platform: Platform): Sessions {
   const { database, clock, config, logger } = platform;
 
-  const issue = async (trx: Transaction, session: { id: string; gymId: string; userId: string }, now: Date): Promise<SessionTokens> => {
+  const issue = async (
+    trx: Transaction,
+    session: { id: string; gymId: string; userId: string },
+    now: Date,
+  ): Promise<SessionTokens> => {
     const refresh = newSecret();
     await repository.insertRefreshToken(trx, hashSecret(refresh), session.id, now);
-    const access = signAccessToken(config.sessionSecret, { userId: session.userId, gymId: session.gymId, sessionId: session.id }, now);
+    const access = signAccessToken(
+      config.sessionSecret,
+      { userId: session.userId, gymId: session.gymId, sessionId: session.id },
+      now,
+    );
     return { access, accessMs: ACCESS_SECONDS * 1000, refresh, refreshMs: IDLE_MS };
   };
 
@@ -78,7 +86,8 @@ export function createSessions(platform: Platform): Sessions {
         const idle = now.getTime() - session.lastUsedAt.getTime() > IDLE_MS;
         const reused = usedAt !== null && now.getTime() - usedAt.getTime() > GRACE_MS;
         if (idle || reused || session.expiresAt <= now) {
-          if (reused) logger.warn({ sessionId: session.id }, 'a spent refresh token was used again; its session ends');
+          if (reused)
+            logger.warn({ sessionId: session.id }, 'a spent refresh token was used again; its session ends');
           await repository.endSessions(trx, session.gymId, session.userId, { only: session.id }, now);
           return null;
         }
@@ -111,7 +120,13 @@ export function createSessions(platform: Platform): Sessions {
     },
 
     async end(actor, sessionId) {
-      const ended = await repository.endSessions(database, actor.gymId, actor.userId, { only: sessionId }, clock.now());
+      const ended = await repository.endSessions(
+        database,
+        actor.gymId,
+        actor.userId,
+        { only: sessionId },
+        clock.now(),
+      );
       if (ended === 0) throw notFound('That session');
     },
   };

@@ -307,3 +307,20 @@ export async function takeHistory(db: Db, gymId: string, takeId: string): Promis
     .select('type', 'at', 'actor_id');
   return rows.map((row) => ({ type: row.type, at: row.at, actorId: row.actor_id }));
 }
+
+/** Every take of a member, drafts and withdrawn ones too, oldest first. */
+export async function allTakesOf(db: Db, gymId: string, memberId: string): Promise<TakeRow[]> {
+  const rows: Row[] = await db('takes')
+    .where({ gym_id: gymId, member_id: memberId })
+    .orderBy('created_at')
+    .orderBy('id');
+  return rows.map(toTake);
+}
+
+/** Deletes a member's takes with all that hangs on them: clips, comments, marks, measures, answers, replies. */
+export async function deleteTakesOf(trx: Transaction, gymId: string, memberId: string): Promise<void> {
+  const own = () => trx('takes').where({ gym_id: gymId, member_id: memberId });
+  // Takes point at their predecessors, so the chain is undone first.
+  await own().update({ previous_take_id: null });
+  await own().delete();
+}

@@ -15,7 +15,8 @@ const SYSTEMS: readonly (readonly [RegExp, string])[] = [
   [/Linux/, 'Linux'],
 ];
 
-const first = (table: readonly (readonly [RegExp, string])[], agent: string) => table.find(([pattern]) => pattern.test(agent))?.[1];
+const first = (table: readonly (readonly [RegExp, string])[], agent: string) =>
+  table.find(([pattern]) => pattern.test(agent))?.[1];
 
 /** In a few words, what a call came from, for a person's own list of sessions. */
 export function deviceOf(req: Request): string {

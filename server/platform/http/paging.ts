@@ -1,4 +1,4 @@
-import * as z from 'zod';
+import type * as z from 'zod';
 import { AppError } from '../errors';
 
 /** Packs the last row's sort key into an opaque cursor. */

@@ -1,0 +1,2 @@
+export { registerAuthRoutes } from './auth-routes';
+export { createAuth, type Auth } from './auth-service';
