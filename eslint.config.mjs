@@ -2,7 +2,17 @@ import angular from 'angular-eslint';
 import tseslint from 'typescript-eslint';
 
 export default tseslint.config(
-  { ignores: ['dist/', 'node_modules/', '.angular/', 'storage/', 'coverage/', 'test-results/', 'playwright-report/'] },
+  {
+    ignores: [
+      'dist/',
+      'node_modules/',
+      '.angular/',
+      'storage/',
+      'coverage/',
+      'test-results/',
+      'playwright-report/',
+    ],
+  },
   {
     files: ['**/*.ts'],
     extends: [...tseslint.configs.strict, ...tseslint.configs.stylistic],
@@ -21,7 +31,13 @@ export default tseslint.config(
   },
   {
     // Programs that talk to a person on a terminal.
-    files: ['server/start/**/*.ts', 'test/run.ts', 'test/bench/**/*.ts', 'test/e2e/pictures.ts', 'seeds/**/*.ts'],
+    files: [
+      'server/start/**/*.ts',
+      'test/run.ts',
+      'test/bench/**/*.ts',
+      'test/e2e/pictures.ts',
+      'seeds/**/*.ts',
+    ],
     rules: { 'no-console': 'off' },
   },
   {
@@ -29,8 +45,14 @@ export default tseslint.config(
     extends: [...angular.configs.tsRecommended],
     processor: angular.processInlineTemplates,
     rules: {
-      '@angular-eslint/component-selector': ['error', { type: ['element', 'attribute'], prefix: 'mf', style: 'kebab-case' }],
-      '@angular-eslint/directive-selector': ['error', { type: 'attribute', prefix: 'mf', style: 'camelCase' }],
+      '@angular-eslint/component-selector': [
+        'error',
+        { type: ['element', 'attribute'], prefix: 'mf', style: 'kebab-case' },
+      ],
+      '@angular-eslint/directive-selector': [
+        'error',
+        { type: 'attribute', prefix: 'mf', style: 'camelCase' },
+      ],
       '@angular-eslint/prefer-on-push-component-change-detection': 'error',
       '@angular-eslint/component-class-suffix': 'off',
       '@angular-eslint/directive-class-suffix': 'off',

@@ -8,8 +8,19 @@ export default defineConfig({
     hookTimeout: 120_000,
     projects: [
       { extends: true, test: { name: 'unit', include: ['server/**/*.spec.ts', 'seeds/**/*.spec.ts'] } },
-      { extends: true, test: { name: 'integration', include: ['test/integration/**/*.spec.ts'], globalSetup: 'test/support/global-setup.ts', fileParallelism: false } },
-      { extends: true, test: { name: 'media', include: ['test/media/**/*.spec.ts'], fileParallelism: false } },
+      {
+        extends: true,
+        test: {
+          name: 'integration',
+          include: ['test/integration/**/*.spec.ts'],
+          globalSetup: 'test/support/global-setup.ts',
+          fileParallelism: false,
+        },
+      },
+      {
+        extends: true,
+        test: { name: 'media', include: ['test/media/**/*.spec.ts'], fileParallelism: false },
+      },
     ],
   },
 });
