@@ -1,5 +1,5 @@
 import { clamp01, minJerk } from './easing';
-import measured from './data/measured-squats.json';
+import measured from './data/measured-squats.json' with { type: 'json' };
 
 /**
  * The share of its way that knee flexion or trunk lean has covered at progress s of a phase, 0 to 1, as measured on

@@ -84,7 +84,7 @@ async function receive(
   const named = addresses(parsed.to);
   const mail: ReceivedMail = {
     // A mail without a To header still has recipients: the ones named in the envelope.
-    to: named.length > 0 ? named : session.envelope.rcptTo.map((recipient) => recipient.address),
+    to: (named.length > 0 ? named : session.envelope.rcptTo.map((recipient) => recipient.address)).join(', '),
     subject: parsed.subject ?? '',
     text: parsed.text ?? '',
     html: parsed.html || '',

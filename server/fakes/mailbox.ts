@@ -3,7 +3,7 @@ import { join } from 'node:path';
 
 /** One mail as it was received. `at` is the moment of receipt, ISO 8601 in UTC. */
 export interface ReceivedMail {
-  to: string[];
+  to: string;
   subject: string;
   text: string;
   html: string;

@@ -56,7 +56,7 @@ describe('the services of a test run', () => {
     const response = await fetch(services.mail.mailboxUrl);
     const { items } = (await response.json()) as { items: ReceivedMail[] };
     expect(items[0]).toMatchObject({
-      to: ['mira@ironbirch.example'],
+      to: 'mira@ironbirch.example',
       subject: 'Välkommen',
       text: 'Hello Mira\n',
     });
