@@ -91,11 +91,7 @@ export function buildApp(platform: Platform, mailer: Mailer): App {
           // Angular writes component styles into style elements; script stays strict.
           styleSrc: ["'self'", "'unsafe-inline'"],
           imgSrc: ["'self'", 'data:', 'blob:'],
-          mediaSrc: [
-            "'self'",
-            'blob:',
-            ...(config.store.publicEndpoint ? [config.store.publicEndpoint] : []),
-          ],
+          mediaSrc: ["'self'", 'blob:'],
           connectSrc: ["'self'"],
           fontSrc: ["'self'"],
           objectSrc: ["'none'"],

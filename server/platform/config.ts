@@ -16,7 +16,6 @@ const Environment = z.object({
   S3_BUCKET: z.string().default('midfoot'),
   S3_ACCESS_KEY: z.string(),
   S3_SECRET_KEY: z.string(),
-  S3_PUBLIC_ENDPOINT: optional(z.url()),
   SMTP_URL: z.url(),
   MAIL_FROM: z.string().default('Midfoot <post@midfoot.example>'),
   MAILBOX_URL: optional(z.url()),
@@ -50,8 +49,6 @@ export interface Config {
     readonly bucket: string;
     readonly accessKey: string;
     readonly secretKey: string;
-    /** When set, media is answered by redirects to short-lived signed addresses under this endpoint. */
-    readonly publicEndpoint: string | null;
   };
   readonly smtpUrl: string;
   readonly mailFrom: string;
@@ -97,7 +94,6 @@ export function readConfig(env: NodeJS.ProcessEnv): Config {
       bucket: e.S3_BUCKET,
       accessKey: e.S3_ACCESS_KEY,
       secretKey: e.S3_SECRET_KEY,
-      publicEndpoint: e.S3_PUBLIC_ENDPOINT ?? null,
     },
     smtpUrl: e.SMTP_URL,
     mailFrom: e.MAIL_FROM,

@@ -71,7 +71,8 @@ async function listInputs(projectDir: string): Promise<string[]> {
     const path = join(projectDir, input);
     try {
       for (const entry of await readdir(path, { recursive: true, withFileTypes: true })) {
-        if (entry.isFile() && !entry.name.endsWith('.spec.ts')) files.push(join(entry.parentPath, entry.name));
+        if (entry.isFile() && !entry.name.endsWith('.spec.ts'))
+          files.push(join(entry.parentPath, entry.name));
       }
     } catch (error) {
       if ((error as NodeJS.ErrnoException).code !== 'ENOTDIR') throw error;

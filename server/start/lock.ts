@@ -14,7 +14,16 @@ export interface Lock {
 export async function takeLock(file: string, wait: boolean): Promise<Lock | undefined> {
   const holder = spawn(
     'flock',
-    ['--no-fork', ...(wait ? [] : ['--nonblock']), '--conflict-exit-code', '75', file, 'sh', '-c', 'echo held; exec cat'],
+    [
+      '--no-fork',
+      ...(wait ? [] : ['--nonblock']),
+      '--conflict-exit-code',
+      '75',
+      file,
+      'sh',
+      '-c',
+      'echo held; exec cat',
+    ],
     // A group of its own: Ctrl-C on the terminal must not take the lock away before we have stopped everything.
     { stdio: ['pipe', 'pipe', 'inherit'], detached: true },
   );

@@ -29,7 +29,9 @@ export async function givenEnvironment(env: NodeJS.ProcessEnv): Promise<NodeJS.P
     if ((error as NodeJS.ErrnoException).code !== 'ENOENT') throw error;
   }
   // An empty setting means the same as a missing one.
-  return Object.fromEntries(Object.entries({ ...parseEnv(text), ...env }).filter(([, value]) => value !== ''));
+  return Object.fromEntries(
+    Object.entries({ ...parseEnv(text), ...env }).filter(([, value]) => value !== ''),
+  );
 }
 
 /**

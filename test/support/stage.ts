@@ -1,6 +1,6 @@
-import { spawn } from 'node:child_process';
 import { join } from 'node:path';
-import { buildOutput, clientDir, hashInputs, isBuilt, takeBuild } from '../../server/start/client-build';
+import { buildClient } from '../../server/start/build-client';
+import { clientDir } from '../../server/start/client-build';
 import { freePort } from '../../server/start/ports';
 import { answersHttp, startProcess, waitUntilReady, type RunningProcess } from '../../server/start/processes';
 import { projectDir } from '../../server/start/project';
@@ -18,27 +18,9 @@ export interface Stage {
   stop(): Promise<void>;
 }
 
-/** Builds the client for production, unless the one that stands was made from the same sources. */
-export async function buildClient(): Promise<void> {
-  const hash = await hashInputs(projectDir);
-  if (await isBuilt(projectDir, hash)) return;
-  const code = await new Promise<number | null>((resolve, reject) => {
-    const args = ['node_modules/@angular/cli/bin/ng.js', 'build', '--output-path', buildOutput];
-    const build = spawn(process.execPath, [...args, '--progress=false'], {
-      cwd: projectDir,
-      stdio: ['ignore', 'inherit', 'inherit'],
-      env: { ...process.env, NG_CLI_ANALYTICS: 'false' },
-    });
-    build.once('error', reject);
-    build.once('exit', resolve);
-  });
-  if (code !== 0) throw new Error('The client could not be built; what is wrong stands above.');
-  await takeBuild(projectDir, hash);
-}
-
 /** @param more settings beside the tests' usual ones */
 export async function openStage(more: NodeJS.ProcessEnv = {}): Promise<Stage> {
-  await buildClient();
+  await buildClient((line) => process.stdout.write(`${line}\n`));
   const services = await startServices();
   const started: RunningProcess[] = [];
   const stop = async () => {
