@@ -80,6 +80,15 @@ export function buildApp(platform: Platform, mailer: Mailer): App {
       logger,
       autoLogging: { ignore: (req) => req.url === '/api/health' },
       customLogLevel: (_req, res) => (res.statusCode >= 500 ? 'error' : 'info'),
+      // An invitation's address is its secret, so it is not written down; nor is anything people sent.
+      serializers: {
+        req: (req: { id: unknown; method: string; url: string }) => ({
+          id: req.id,
+          method: req.method,
+          url: req.url.replace(/^(\/api\/invitations\/)[^/?]{20,}/, '$1…'),
+        }),
+        res: (res: { statusCode: number }) => ({ status: res.statusCode }),
+      },
     }),
   );
   app.use(
