@@ -92,9 +92,9 @@ async function runInstance(settings: StartSettings): Promise<void> {
     const env = programEnvironment(settings, secrets, ports);
     say('Bringing the database up to date …');
     await runToEnd('server/platform/migrate.ts', env);
+    if (settings.demo) await runToEnd('seeds/demo.ts', env);
     say('Starting the api and the worker …');
     for (const program of ownPrograms(settings, env)) await supervisor.keep(() => program.start());
-    if (settings.demo) await runToEnd('seeds/demo.ts', env);
     await greet(settings);
     await waitForStop();
   } finally {
