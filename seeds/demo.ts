@@ -94,7 +94,15 @@ async function makeDemo(platform: Platform, accountsFile: string): Promise<void>
         lifts.set(lift.name, await desk.call<LiftDto>(person('maren'), 'POST', '/api/lifts', lift));
       }
       await desk.work(true);
-      const actors = Object.fromEntries(people) as unknown as People;
+      const actors: People = {
+        maren: person('maren'),
+        petru: person('petru'),
+        tove: person('tove'),
+        ilmari: person('ilmari'),
+        signe: person('signe'),
+        joaquin: person('joaquin'),
+        edda: person('edda'),
+      };
       await liveHistory(
         desk,
         actors,

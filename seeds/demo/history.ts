@@ -4,7 +4,7 @@ import type { Desk, DeskPerson } from './desk';
 import { answer, film, filmBroken, pairOf, type Answered } from './story';
 
 export type People = Readonly<
-  Record<'wilma' | 'maren' | 'petru' | 'tove' | 'ilmari' | 'signe' | 'joaquin' | 'edda', DeskPerson>
+  Record<'maren' | 'petru' | 'tove' | 'ilmari' | 'signe' | 'joaquin' | 'edda', DeskPerson>
 >;
 
 /** The pairs that the history shows; each person is drawn by one seed. */

@@ -1,3 +1,4 @@
+import { setMaxListeners } from 'node:events';
 import { JOB_PAYLOADS, type JobType } from '../contract/jobs';
 import { inTransaction } from '../platform/database';
 import {
@@ -67,6 +68,8 @@ export function startJobLoop(
 
   const run = async <T extends JobType>(kind: JobKind<T>, job: ClaimedJob) => {
     const abort = new AbortController();
+    // A job hands its signal to everything it starts, a dozen uploads at once among them.
+    setMaxListeners(0, abort.signal);
     const signal = AbortSignal.any([abort.signal, stopping.signal]);
     const heartbeat = setInterval(() => {
       renewJob(database, worker, job, clock.now()).then(
