@@ -20,7 +20,7 @@ import { phoneWords, repsWords } from '../shared/take-words/brief-words';
 import { AbsoluteTime } from '../shared/times/absolute-time';
 import { RelativeTime } from '../shared/times/relative-time';
 import { AssignmentStore } from './assignment-store';
-import { askedGroups, audienceWords, filmedWords, workWords } from './assignment-words';
+import { askedGroups, audienceWords, filmedWords, waitingWords, workWords } from './assignment-words';
 
 /** One assignment: what was asked, and who has filmed, who waits, who has not. */
 @Component({
@@ -54,14 +54,16 @@ export class AssignmentPage {
     const assignment = this.store.assignment();
     if (!assignment) return null;
     const { asked, lift } = assignment;
+    const groups = askedGroups(asked);
+    const filmed = filmedWords(assignment.counts ?? { asked: asked.length, filmed: 0 });
     return {
       assignment,
-      filmed: filmedWords(assignment.counts ?? { asked: asked.length, filmed: 0 }),
+      stand: [filmed, waitingWords(groups)].filter(Boolean).join(' '),
       work: workWords(assignment),
       who: audienceWords(assignment.audience),
       film: `${repsWords(lift.brief)}, ${lift.brief.views.join(' and ')}; ${phoneWords(lift.brief)}`,
       scale: lift.scales.find(({ id }) => id === assignment.untilAnsweredScaleId) ?? null,
-      groups: askedGroups(asked),
+      groups,
     };
   });
 

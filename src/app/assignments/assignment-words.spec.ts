@@ -7,6 +7,7 @@ import {
   filmedWords,
   findMembers,
   openWords,
+  waitingWords,
   workWords,
 } from './assignment-words';
 
@@ -82,6 +83,12 @@ describe('who has filmed', () => {
       null,
       ['/answers', 'take-of-Tove'],
     ]);
+  });
+
+  it('is counted as far as it waits', () => {
+    expect(waitingWords(groups)).toBe('3 wait for an answer.');
+    expect(waitingWords(askedGroups([asked('Odd', 'waiting')]))).toBe('1 waits for an answer.');
+    expect(waitingWords(askedGroups([asked('Siv', null)]))).toBeNull();
   });
 
   it('has no group without members', () => {

@@ -26,10 +26,18 @@ export function audienceWords(audience: AssignmentDto['audience']): string {
 /** How far the members are: "2 of 4 have filmed." */
 export function filmedWords({ asked, filmed }: { asked: number; filmed: number }): string {
   if (asked === 0) return 'Nobody is asked.';
-  if (filmed === 0)
-    return asked === 1 ? 'The member asked has not filmed yet.' : `None of ${asked} has filmed yet.`;
-  if (filmed >= asked) return asked === 1 ? 'The member asked has filmed.' : `All ${asked} have filmed.`;
+  if (asked === 1)
+    return filmed === 0 ? 'The member asked has not filmed yet.' : 'The member asked has filmed.';
+  if (filmed === 0) return `None of ${asked} has filmed yet.`;
+  if (filmed >= asked) return `All ${asked} have filmed.`;
   return `${filmed} of ${asked} ${filmed === 1 ? 'has' : 'have'} filmed.`;
+}
+
+/** How many of them wait for an answer: "2 wait for an answer."; null when nobody does. */
+export function waitingWords(groups: readonly AskedGroup[]): string | null {
+  const waiting = groups.find(({ place }) => place === 'waiting')?.rows.length ?? 0;
+  if (waiting === 0) return null;
+  return waiting === 1 ? '1 waits for an answer.' : `${waiting} wait for an answer.`;
 }
 
 /** The assignments in a sentence: "3 assignments are open." */
@@ -84,7 +92,7 @@ export interface AskedRow {
   /** `take 2, waits`; null before a take was handed in. */
   words: string | null;
   submittedAt: string | null;
-  /** The page to go to and what it is called there; null where there is nothing to open. */
+  /** The page to go to and what to do there; null where there is nothing to open. */
   link: { path: string[]; label: string } | null;
 }
 
@@ -95,17 +103,17 @@ export interface AskedGroup {
   rows: AskedRow[];
 }
 
-function linkOf(place: Place, { latest, member }: AskedMember): AskedRow['link'] {
+function linkOf(place: Place, { latest }: AskedMember): AskedRow['link'] {
   if (!latest) return null;
   switch (place) {
     case 'waiting':
       return latest.state === 'processing'
         ? null
-        : { path: ['/board', latest.takeId], label: `Open ${member.name}’s take on the board` };
+        : { path: ['/board', latest.takeId], label: 'Open on the board' };
     case 'answered':
-      return { path: ['/answers', latest.takeId], label: `Read the answer to ${member.name}` };
+      return { path: ['/answers', latest.takeId], label: 'Read the answer' };
     case 'unplayable':
-      return { path: ['/queue', 'unplayable'], label: `See why ${member.name}’s take cannot be played` };
+      return { path: ['/queue', 'unplayable'], label: 'See why' };
     case 'not-filmed':
       return null;
   }

@@ -16,6 +16,8 @@ export class AssignmentsStore {
   private readonly api = inject(AssignmentsApi);
   private readonly next = signal<string | null>(null);
   private fetches = 0;
+  /** How many are to be shown, if there are as many. */
+  private wanted = PAGE_SIZE;
 
   /** Null until the first ones are here. */
   readonly assignments = signal<readonly AssignmentDto[] | null>(null);
@@ -42,7 +44,7 @@ export class AssignmentsStore {
   /** Fetches as many as are shown, at least a page. */
   async refresh(): Promise<void> {
     const fetch = ++this.fetches;
-    const wanted = Math.max(PAGE_SIZE, this.assignments()?.length ?? 0);
+    const { wanted } = this;
     try {
       const items: AssignmentDto[] = [];
       let next: string | null = null;
@@ -61,20 +63,13 @@ export class AssignmentsStore {
     }
   }
 
-  /** Adds the next page to the end. */
+  /** Shows a page more. All are fetched anew, so that nothing made or closed meanwhile is missed or stands twice. */
   async more(): Promise<void> {
-    const next = this.next();
-    if (next === null || this.isFetchingMore()) return;
-    const fetch = ++this.fetches;
+    if (!this.hasMore() || this.isFetchingMore()) return;
+    this.wanted = (this.assignments()?.length ?? 0) + PAGE_SIZE;
     this.isFetchingMore.set(true);
-    try {
-      const page = await firstValueFrom(this.api.assignments(PAGE_SIZE, next));
-      if (fetch === this.fetches) this.show([...(this.assignments() ?? []), ...page.items], page.next);
-    } catch (error) {
-      if (fetch === this.fetches) this.problem.set(problemOf(error));
-    } finally {
-      this.isFetchingMore.set(false);
-    }
+    await this.refresh();
+    this.isFetchingMore.set(false);
   }
 
   private show(items: readonly AssignmentDto[], next: string | null): void {

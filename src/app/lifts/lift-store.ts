@@ -33,7 +33,17 @@ export class LiftStore {
 
   async refresh(): Promise<void> {
     const { liftId } = this;
-    if (liftId !== null) await this.ask((id) => firstValueFrom(this.api.lift(id)), liftId);
+    if (liftId === null) return;
+    const fetch = ++this.fetches;
+    try {
+      const lift = await firstValueFrom(this.api.lift(liftId));
+      // A later question overtook this one.
+      if (fetch !== this.fetches) return;
+      this.lift.set(lift);
+      this.problem.set(null);
+    } catch (error) {
+      if (fetch === this.fetches) this.problem.set(problemOf(error));
+    }
   }
 
   /**
@@ -43,21 +53,13 @@ export class LiftStore {
   async setArchived(archived: boolean): Promise<boolean> {
     const { liftId } = this;
     if (liftId === null) return false;
-    return this.ask((id) => firstValueFrom(this.api.change(id, { archived })), liftId);
-  }
-
-  private async ask(question: (id: string) => Promise<LiftDto>, liftId: string): Promise<boolean> {
-    const fetch = ++this.fetches;
     try {
-      const lift = await question(liftId);
-      // A later question overtook this one.
-      if (fetch === this.fetches) {
-        this.lift.set(lift);
-        this.problem.set(null);
-      }
+      const changed = await firstValueFrom(this.api.change(liftId, { archived }));
+      this.lift.update((lift) => (lift?.id === liftId ? changed : lift));
+      this.problem.set(null);
       return true;
     } catch (error) {
-      if (fetch === this.fetches) this.problem.set(problemOf(error));
+      this.problem.set(problemOf(error));
       return false;
     }
   }
