@@ -7,7 +7,7 @@ import {
   MatDialogContent,
   MatDialogTitle,
 } from '@angular/material/dialog';
-import type { Question } from './confirm';
+import type { Question } from './question';
 
 @Component({
   selector: 'mf-confirm-dialog',

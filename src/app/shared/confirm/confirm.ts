@@ -1,13 +1,6 @@
 import { inject, Injectable, Injector } from '@angular/core';
 import { firstValueFrom } from 'rxjs';
-
-/** What is asked. Both answers are named by what they do, never "OK". */
-export interface Question {
-  heading: string;
-  body: string;
-  confirmLabel: string;
-  cancelLabel: string;
-}
+import type { Question } from './question';
 
 /** Asks before what cannot be undone. The dialog's code is fetched with the first question. */
 @Injectable({ providedIn: 'root' })

@@ -1,10 +1,16 @@
-import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
+import { ChangeDetectionStrategy, Component, computed, inject, type Signal } from '@angular/core';
 import { MatButton } from '@angular/material/button';
-import { MatDialogActions, MatDialogClose, MatDialogContent, MatDialogTitle } from '@angular/material/dialog';
+import {
+  MAT_DIALOG_DATA,
+  MatDialogActions,
+  MatDialogClose,
+  MatDialogContent,
+  MatDialogTitle,
+} from '@angular/material/dialog';
 import { KeyCap } from '../key-cap/key-cap';
 import { Preferences } from '../preferences/preferences';
+import type { KeyBinding } from './key-binding';
 import { keyWords } from './key-rules';
-import { Keys, type KeyBinding } from './keys';
 
 /** The sheet of keys, made from the registry itself, with the switch that turns single keys off. */
 @Component({
@@ -78,11 +84,12 @@ import { Keys, type KeyBinding } from './keys';
 })
 export class KeysSheet {
   protected readonly preferences = inject(Preferences);
-  private readonly keys = inject(Keys);
+  /** The registry's keys, given by whoever opens the sheet. */
+  private readonly bindings = inject<Signal<readonly KeyBinding[]>>(MAT_DIALOG_DATA);
 
   protected readonly groups = computed(() => {
     const byName = new Map<string, KeyBinding[]>();
-    for (const binding of this.keys.bindings()) {
+    for (const binding of this.bindings()) {
       byName.set(binding.group, [...(byName.get(binding.group) ?? []), binding]);
     }
     return [...byName].map(([name, bindings]) => ({ name, bindings }));

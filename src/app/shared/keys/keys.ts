@@ -1,19 +1,7 @@
 import { computed, DestroyRef, DOCUMENT, inject, Injectable, Injector, signal } from '@angular/core';
 import { Preferences } from '../preferences/preferences';
+import type { KeyBinding } from './key-binding';
 import { mayAct, nameOfKey, placeOf } from './key-rules';
-
-/** One key and what it does; the same entry feeds the keyboard and the sheet of keys. */
-export interface KeyBinding {
-  /** As `nameOfKey` writes it: `c`, `Space`, `Shift+ArrowLeft`, `Mod+Enter`. */
-  readonly key: string;
-  /** What it does, for the sheet: "one frame back". */
-  readonly label: string;
-  /** The heading it stands under in the sheet. */
-  readonly group: string;
-  readonly run: () => void;
-  /** Whether holding the key down repeats the act. */
-  readonly repeats?: boolean;
-}
 
 /** Keys of one page, put into the registry together and taken out together. */
 interface KeySet {
@@ -61,7 +49,12 @@ export class Keys {
       import('@angular/material/dialog'),
       import('./keys-sheet'),
     ]);
-    this.injector.get(MatDialog).open(KeysSheet, { width: '720px', maxWidth: '94vw', autoFocus: 'dialog' });
+    this.injector.get(MatDialog).open(KeysSheet, {
+      data: this.bindings,
+      width: '720px',
+      maxWidth: '94vw',
+      autoFocus: 'dialog',
+    });
   }
 
   private take(event: KeyboardEvent): void {
