@@ -6,7 +6,7 @@ import {
   type ValidationErrors,
 } from '@angular/forms';
 import type { LiftDto } from '@contract';
-import { instantOfWall } from '../filming/train-times';
+import { instantOfWall } from '../shared/times/wall-time';
 import { SERVER_ERROR } from '../shared/problems/apply-problem';
 import { repsWords } from '../shared/take-words/brief-words';
 import { dueWords, inSentence, type Now } from '../shared/take-words/take-words';

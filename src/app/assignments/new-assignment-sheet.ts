@@ -16,7 +16,7 @@ import { MatButton } from '@angular/material/button';
 import { Router, RouterLink } from '@angular/router';
 import { firstValueFrom, map } from 'rxjs';
 import type { LiftDto, Person } from '@contract';
-import { wallTime } from '../filming/train-times';
+import { wallTime } from '../shared/times/wall-time';
 import { Chips, type ChipOption } from '../shared/chips/chips';
 import { Field } from '../shared/field/field';
 import { FieldInput } from '../shared/field/field-input';

@@ -1,4 +1,5 @@
-import { instantOfWall, trainChoices, wallTime } from './train-times';
+import { instantOfWall, wallTime } from '../shared/times/wall-time';
+import { trainChoices } from './train-times';
 
 const zone = 'Europe/Stockholm';
 // Tuesday 1 December 2026, 13:00 in Stockholm (UTC+1 in winter).

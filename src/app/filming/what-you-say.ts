@@ -19,7 +19,8 @@ import { PainCaution } from '../shared/pain-caution/pain-caution';
 import { Clock } from '../shared/times/clock';
 import { GymZone } from '../shared/times/gym-zone';
 import type { Words } from './filming-api';
-import { instantOfWall, trainChoices, wallTime } from './train-times';
+import { instantOfWall, wallTime } from '../shared/times/wall-time';
+import { trainChoices } from './train-times';
 
 const OTHER = 'other';
 const NO_RUSH = 'no-rush';

@@ -1,0 +1,79 @@
+import type { Call, DraftAnswer, LiftDto, Mark, MarkDto, NewAnswerBody, TakeState } from './board-types';
+
+export const CALL_LABELS: Readonly<Record<Call, string>> = {
+  go: 'as planned',
+  light: 'keep it light',
+  scale: 'scale it',
+};
+
+/** The mark after one more press of a fault's key: seen, clear, hidden, then not marked again. */
+export function nextMark(mark: Mark | null): Mark | null {
+  switch (mark) {
+    case null:
+      return 'seen';
+    case 'seen':
+      return 'clear';
+    case 'clear':
+      return 'hidden';
+    case 'hidden':
+      return null;
+  }
+}
+
+/** Marks with one fault's set, moved on or taken off. */
+export function withMark(marks: readonly MarkDto[], faultId: string, set: MarkDto | null): MarkDto[] {
+  const others = marks.filter((mark) => mark.faultId !== faultId);
+  return set ? [...others, set] : others;
+}
+
+/** What still stands between the coach and sending, each as a sentence. */
+export function missingWords(draft: DraftAnswer, lift: LiftDto): string[] {
+  const missing: string[] = [];
+  if (draft.topCue.trim() === '') missing.push('Write the one thing to change.');
+  if (!draft.call) missing.push('Say what to do with the load.');
+  if (draft.call === 'scale' && !lift.scales.some((scale) => scale.id === draft.scaleId)) {
+    missing.push('Choose the scale to use.');
+  }
+  if (draft.refilm?.views.length === 0) missing.push('Choose the views to film again.');
+  return missing;
+}
+
+/** The draft as an answer; null while something is missing. */
+export function answerOf(draft: DraftAnswer, lift: LiftDto): NewAnswerBody | null {
+  if (!draft.call || missingWords(draft, lift).length > 0) return null;
+  const tempo = draft.tempo?.trim() ?? '';
+  return {
+    topCue: draft.topCue.trim(),
+    call: draft.call,
+    ...(draft.call === 'scale' ? { scaleId: draft.scaleId } : {}),
+    ...(tempo === '' ? {} : { tempo }),
+    ...(draft.refilm ? { refilm: draft.refilm } : {}),
+  };
+}
+
+/** Why nobody can answer the take; null while it waits. */
+export function closedWords(state: TakeState): string | null {
+  switch (state) {
+    case 'waiting':
+    case 'picked-up':
+      return null;
+    case 'answered':
+      return 'This take is answered. What was said stays as it is.';
+    case 'processing':
+      return 'The clips are being made ready. The take waits as soon as they play.';
+    case 'unplayable':
+      return 'A clip of this take cannot be played. The member was told what to do.';
+    case 'withdrawn':
+      return 'The member took this take back.';
+    case 'draft':
+      return 'This take was not handed in yet.';
+  }
+}
+
+/** Above this many comments the board says that people change one thing at a time. */
+export const MANY_COMMENTS = 3;
+
+/** The digit that marks the n-th fault, from 0; none beyond the tenth. */
+export function faultKey(index: number): string | null {
+  return index < 9 ? String(index + 1) : index === 9 ? '0' : null;
+}
