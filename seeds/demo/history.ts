@@ -9,13 +9,13 @@ export type People = Readonly<
 
 /** The pairs that the history shows; each person is drawn by one seed. */
 export const PAIRS = {
-  toveFirst: pairOf('goblet-squat', 11, { 'heels-lift': 0.8, 'chest-drops': 0.4 }),
-  toveSecond: pairOf('goblet-squat', 11, { 'chest-drops': 0.2 }),
-  ilmariFirst: pairOf('swing', 23, { 'squats-instead-of-hinging': 0.8, 'arms-lift-early': 0.5 }),
-  ilmariSecond: pairOf('swing', 23, { 'arms-lift-early': 0.2 }),
-  eddaPress: pairOf('push-press', 37, { 'ribs-flare': 0.8, 'uneven-press': 0.4 }),
-  eddaSquat: pairOf('goblet-squat', 37, { 'knees-fall-in': 0.7 }),
-  signeHold: pairOf('split-squat-hold', 41, { 'knees-fall-in': 0.5, 'leans-forward': 0.5 }),
+  toveFirst: pairOf('goblet-squat', 60, { 'heels-lift': 0.8, 'chest-drops': 0.4 }),
+  toveSecond: pairOf('goblet-squat', 60, { 'chest-drops': 0.2 }),
+  ilmariFirst: pairOf('swing', 49, { 'squats-instead-of-hinging': 0.8, 'arms-lift-early': 0.5 }),
+  ilmariSecond: pairOf('swing', 49, { 'arms-lift-early': 0.2 }),
+  eddaPress: pairOf('push-press', 28, { 'ribs-flare': 0.8, 'uneven-press': 0.4 }),
+  eddaSquat: pairOf('goblet-squat', 28, { 'knees-fall-in': 0.7 }),
+  signeHold: pairOf('split-squat-hold', 38, { 'knees-fall-in': 0.5, 'leans-forward': 0.5 }),
   joaquinSwing: pairOf('swing', 52, { 'bell-too-low': 0.7 }),
 } as const;
 

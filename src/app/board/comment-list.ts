@@ -71,12 +71,11 @@ import { MANY_COMMENTS } from './board-words';
       font-size: var(--mf-text-s);
     }
 
-    li {
+    ol > li {
       display: flex;
       align-items: flex-start;
       gap: var(--mf-space-1);
       padding: var(--mf-space-1) 0;
-      border-bottom: 1px solid var(--mf-mist);
       font-size: var(--mf-text-s);
     }
 
