@@ -11,12 +11,7 @@ import { CALL_LABELS } from './board-words';
     <h2>Take {{ earlier().take.number }}, <mf-absolute-time [at]="sentAt()" /></h2>
     @if (earlier().answer; as answer) {
       <p class="cue">{{ answer.topCue }}</p>
-      <p class="mf-small mf-quiet">
-        {{ answer.author.name }}: {{ callWords() }}
-        @if (answer.refilm?.note; as note) {
-          . Asked: {{ note }}
-        }
-      </p>
+      <p class="mf-small mf-quiet">{{ words() }}</p>
       <ul class="mf-list">
         @for (comment of answer.comments; track comment.id) {
           <li class="mf-small">{{ comment.body }}</li>
@@ -54,9 +49,12 @@ export class SaidBefore {
   protected readonly sentAt = computed(
     () => this.earlier().take.submittedAt ?? this.earlier().take.createdAt,
   );
-  protected readonly callWords = computed(() => {
+  protected readonly words = computed(() => {
     const answer = this.earlier().answer;
     if (!answer) return '';
-    return answer.scale && answer.call === 'scale' ? `use ${answer.scale.name}` : CALL_LABELS[answer.call];
+    const call =
+      answer.scale && answer.call === 'scale' ? `use ${answer.scale.name}` : CALL_LABELS[answer.call];
+    const asked = answer.refilm?.note;
+    return `${answer.author.name}: ${call}.${asked ? ` Asked for: ${asked}` : ''}`;
   });
 }
