@@ -2,6 +2,7 @@ import { inject } from '@angular/core';
 import { Router, type Routes } from '@angular/router';
 import { roleGuard, signedInGuard, signedOutGuard } from './session/session-guards';
 import { SessionStore } from './session/session-store';
+import { ErrorPage } from './shell/error-page';
 
 const forMembers = roleGuard('member');
 const forStaff = roleGuard('coach', 'owner');
@@ -57,7 +58,8 @@ export const routes: Routes = [
   {
     path: 'unreachable',
     title: 'Out of reach',
-    loadComponent: () => import('./shell/error-page').then((m) => m.ErrorPage),
+    // Not fetched when it is needed, for then nothing can be fetched.
+    component: ErrorPage,
   },
   {
     path: 'board',
@@ -121,6 +123,10 @@ export const routes: Routes = [
         path: 'gym',
         canActivate: [forOwners],
         loadChildren: () => import('./gym/gym.routes').then((m) => m.ROUTES_GYM),
+      },
+      {
+        path: 'account',
+        loadChildren: () => import('./account/account.routes').then((m) => m.ROUTES_ACCOUNT),
       },
       {
         path: '**',
