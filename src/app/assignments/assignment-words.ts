@@ -107,9 +107,7 @@ function linkOf(place: Place, { latest }: AskedMember): AskedRow['link'] {
   if (!latest) return null;
   switch (place) {
     case 'waiting':
-      return latest.state === 'processing'
-        ? null
-        : { path: ['/board', latest.takeId], label: 'Open on the board' };
+      return latest.state === 'processing' ? null : { path: ['/board', latest.takeId], label: 'Open board' };
     case 'answered':
       return { path: ['/answers', latest.takeId], label: 'Read the answer' };
     case 'unplayable':
