@@ -20,9 +20,9 @@ export interface World {
   readonly assignment: AssignmentDto;
 }
 
-const PASSWORD = 'seven quiet herons at dawn';
+export const PASSWORD = 'seven quiet herons at dawn';
 
-const address = (who: string) => `${who}.${randomBytes(4).toString('hex')}@slipway.example`;
+export const address = (who: string) => `${who}.${randomBytes(4).toString('hex')}@slipway.example`;
 
 /** The newest mail to an address; waits for it. */
 export async function mailTo(
