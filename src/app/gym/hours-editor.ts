@@ -44,7 +44,7 @@ export class HoursEditor {
   private readonly left = signal<ReadonlySet<string>>(new Set());
   protected readonly copying = signal<{ from: Weekday; to: readonly Weekday[] } | null>(null);
   protected readonly isClosed = computed(() => isClosed(this.week()));
-  protected readonly length = computed(() => hoursWords(weekLengthHours(this.week())));
+  protected readonly sum = computed(() => hoursWords(weekLengthHours(this.week())));
   protected readonly days = computed(() =>
     WEEKDAYS.map((day) => {
       const problems = spanProblems(this.week()[day]);

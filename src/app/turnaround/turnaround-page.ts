@@ -126,20 +126,27 @@ export class TurnaroundPage {
       {
         id: 'coach',
         heading: 'By coach',
+        column: 'Coach',
         note: 'Takes are counted for the coach who answered; those that wait are nobody’s yet.',
         hasWaiting: false,
-        rows: figures.byCoach.map((group) => ({ ...group, name: group.coach.name, key: group.coach.id })),
+        rows: figures.byCoach
+          .map((group) => ({ ...group, name: group.coach.name, key: group.coach.id }))
+          .sort((a, b) => a.name.localeCompare(b.name, 'en')),
       },
       {
         id: 'lift',
         heading: 'By lift',
+        column: 'Lift',
         note: null,
         hasWaiting: true,
-        rows: figures.byLift.map((group) => ({ ...group, name: group.lift.name, key: group.lift.id })),
+        rows: figures.byLift
+          .map((group) => ({ ...group, name: group.lift.name, key: group.lift.id }))
+          .sort((a, b) => a.name.localeCompare(b.name, 'en')),
       },
       {
         id: 'week',
         heading: 'By week',
+        column: 'Week',
         note: 'The week in which the take was sent.',
         hasWaiting: true,
         rows: figures.byWeek.map((group) => ({

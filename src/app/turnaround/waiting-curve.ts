@@ -6,10 +6,10 @@ import { curveEndHours, curveWords } from './turnaround-words';
 
 const WIDTH = 640;
 const HEIGHT = 240;
-const LEFT = 44;
+const LEFT = 60;
 const RIGHT = 12;
 const TOP = 12;
-const BOTTOM = 34;
+const BOTTOM = 40;
 
 interface Point {
   hours: number;
@@ -51,7 +51,7 @@ interface Point {
 
     text {
       fill: var(--mf-slate);
-      font: 600 13px var(--mf-font-figures);
+      font: 600 13px/1 var(--mf-font-figures);
     }
 
     .share {
@@ -83,6 +83,13 @@ interface Point {
     .bob {
       fill: var(--mf-ink);
     }
+
+    /* The drawing shrinks with the window; its figures must not. */
+    @media (width < 700px) {
+      text {
+        font-size: 22px;
+      }
+    }
   `,
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
@@ -97,7 +104,7 @@ export class WaitingCurve {
   protected readonly end = WIDTH - RIGHT;
   protected readonly words = computed(() => curveWords(this.curve()));
   private readonly x = computed(() =>
-    scaleLinear([0, curveEndHours(this.curve())], [LEFT, WIDTH - RIGHT]).nice(6),
+    scaleLinear([0, curveEndHours(this.curve())], [LEFT, WIDTH - RIGHT]).nice(5),
   );
   private readonly y = scaleLinear([0, 1], [HEIGHT - BOTTOM, TOP]);
   private readonly points = computed<Point[]>(() => {
@@ -136,7 +143,7 @@ export class WaitingCurve {
   );
   protected readonly hours = computed(() =>
     this.x()
-      .ticks(6)
+      .ticks(5)
       .map((hours) => ({ at: this.x()(hours), label: `${hours} h` })),
   );
 }
