@@ -1,6 +1,6 @@
 import { ChangeDetectionStrategy, Component, computed, effect, inject, input, signal } from '@angular/core';
 import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
-import { FormControl, ReactiveFormsModule, Validators } from '@angular/forms';
+import { FormControl, FormGroup, ReactiveFormsModule, Validators } from '@angular/forms';
 import { MatButton } from '@angular/material/button';
 import { Router, RouterLink } from '@angular/router';
 import type { Role, UserDto } from '@contract';
@@ -66,6 +66,8 @@ export class PersonSheet implements HasUnsavedChanges {
     nonNullable: true,
     validators: [Validators.required, Validators.maxLength(120)],
   });
+  protected readonly roleForm = new FormGroup({ role: this.role });
+  protected readonly consentForm = new FormGroup({ guardian: this.guardian });
   protected readonly problem = signal<Problem | null>(null);
   protected readonly isBusy = signal(false);
   protected readonly person = computed(() => this.store.people()?.find(({ id }) => id === this.personId()));
