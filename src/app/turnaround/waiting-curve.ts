@@ -7,7 +7,7 @@ import { curveEndHours, curveWords } from './turnaround-words';
 const WIDTH = 640;
 const HEIGHT = 240;
 const LEFT = 60;
-const RIGHT = 12;
+const RIGHT = 26;
 const TOP = 12;
 const BOTTOM = 40;
 
