@@ -5,6 +5,7 @@ import { firstName } from '../shared/take-words/take-words';
 import { GymZone } from '../shared/times/gym-zone';
 import { KeyCap } from '../shared/key-cap/key-cap';
 import { instantOfWall, wallTime } from '../shared/times/wall-time';
+import { AnswerPreview } from './answer-preview';
 import { CALL_LABELS, missingWords } from './board-words';
 import type { Saving } from './board-store';
 
@@ -13,7 +14,7 @@ const CALLS = ['go', 'light', 'scale'] as const;
 /** The answer itself: the one thing to change, the load, another take, and sending. */
 @Component({
   selector: 'mf-answer-form',
-  imports: [KeyCap, MatButton],
+  imports: [AnswerPreview, KeyCap, MatButton],
   templateUrl: './answer-form.html',
   styleUrl: './answer-form.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
@@ -29,6 +30,8 @@ export class AnswerForm {
   readonly isReadOnly = input(false);
   /** Cues of the faults marked as seen, offered as the top cue. */
   readonly cues = input<readonly string[]>([]);
+  /** How many comments go with the answer. */
+  readonly commentCount = input(0);
   readonly said = output<Partial<DraftAnswer>>();
   readonly sent = output();
 

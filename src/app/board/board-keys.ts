@@ -11,6 +11,7 @@ interface KeyedBoard {
   seek(toMs: number): void;
   arrow(byX: number, byY: number): void;
   turnLoop(): void;
+  turnSpan(): void;
   setLoopEnd(end: 'start' | 'end'): void;
   turnPlumb(): void;
   turnBeside(): void;
@@ -47,6 +48,7 @@ export function boardKeys(board: KeyedBoard): KeyBinding[] {
     { key: 'ArrowUp', label: 'the comment before', group: say, run: () => board.arrow(0, -1) },
     { key: 'ArrowDown', label: 'the next comment', group: say, run: () => board.arrow(0, 1) },
     { key: 'Enter', label: 'comment here (or just type)', group: say, run: () => board.focusComposer() },
+    { key: ';', label: 'comment on what repeats', group: say, run: () => board.turnSpan() },
     ...Array.from({ length: 10 }, (_, index): KeyBinding => ({
       key: faultKey(index) ?? '',
       label: `fault ${String(index + 1)}: seen, clear, hidden`,

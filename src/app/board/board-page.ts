@@ -15,19 +15,9 @@ import { Location } from '@angular/common';
 import { MatButton } from '@angular/material/button';
 import { ActivatedRoute, Router, RouterLink } from '@angular/router';
 import { firstValueFrom } from 'rxjs';
-import {
-  MEASURE_KINDS,
-  type ClipDto,
-  type CommentDto,
-  type Drawing,
-  type MarkDto,
-  type MeasureDto,
-  type MeasureKind,
-  type View,
-} from '@contract';
+import type { ClipDto, CommentDto, Drawing, MarkDto, MeasureDto, MeasureKind, View } from '@contract';
 import { frameStartMs } from '@calc/frames';
 import { EmptyState } from '../shared/empty-state/empty-state';
-import { Icon } from '../shared/icons/icon';
 import { Keys } from '../shared/keys/keys';
 import { Plumb } from '../shared/plumb/plumb';
 import { ProblemBox } from '../shared/problems/problem-box';
@@ -36,21 +26,26 @@ import { firstName } from '../shared/take-words/take-words';
 import { clipTime } from '../shared/times/time-words';
 import { SessionStore } from '../session/session-store';
 import { AnswerForm } from './answer-form';
+import { AskedFor } from './asked-for';
 import { BoardApi } from './board-api';
 import { BoardHead } from './board-head';
 import { boardKeys } from './board-keys';
+import { NOTICE_ACTS, noticeOf } from './board-notice';
 import { BoardPlayer } from './board-player';
 import { BoardStore, type Instant } from './board-store';
-import { CALL_LABELS, closedWords, missingWords } from './board-words';
+import { closedWords, inPhases, missingWords } from './board-words';
 import { Checklist } from './checklist';
 import { CommentList } from './comment-list';
 import { DraftMirror } from './draft-mirror';
-import { Lease } from './lease';
-import { MEASURE_LABELS, measuredWords, Measuring } from './measuring';
-import { PlaybackClock, SPEEDS } from './playback/playback-clock';
+import { Lease, type LeaseState } from './lease';
+import { MeasureList } from './measure-list';
+import { measuredWords, Measuring } from './measuring';
+import { PlaybackClock } from './playback/playback-clock';
 import { Rail } from './rail';
 import { RepTable } from './rep-table';
 import { SaidBefore } from './said-before';
+import { SentAnswer } from './sent-answer';
+import { Transport } from './transport';
 
 /** A measure or a drawing shows while the picture is this near its instant, ms. */
 const NEAR_MS = 60;
@@ -62,19 +57,22 @@ const LOOP_AROUND_MS = 700;
   selector: 'mf-board-page',
   imports: [
     AnswerForm,
+    AskedFor,
     BoardHead,
     BoardPlayer,
     Checklist,
     CommentList,
     EmptyState,
-    Icon,
     MatButton,
+    MeasureList,
     Plumb,
     ProblemBox,
     Rail,
     RepTable,
     RouterLink,
     SaidBefore,
+    SentAnswer,
+    Transport,
   ],
   providers: [BoardStore, DraftMirror, Lease, Measuring],
   host: { class: 'mf-night' },
@@ -101,14 +99,13 @@ export class BoardPage {
   /** The view that is spoken about, from the address. */
   readonly view = input<string>();
 
-  protected readonly speeds = SPEEDS;
-  protected readonly measureKinds = MEASURE_KINDS;
-  protected readonly measureLabels = MEASURE_LABELS;
-  protected readonly callLabels = CALL_LABELS;
+  protected readonly noticeActs = NOTICE_ACTS;
   protected readonly measuredWords = measuredWords;
 
   protected readonly hasPlumb = signal(false);
   protected readonly showsThen = signal(true);
+  /** A comment is about the stretch that repeats, not about one instant. */
+  protected readonly isOverSpan = signal(false);
   protected readonly openId = signal<string | null>(null);
   private readonly chosenView = signal<View | null>(null);
   private readonly thenView = signal<View | null>(null);
@@ -139,45 +136,24 @@ export class BoardPage {
   protected readonly thenLabel = computed(
     () => `take ${String(this.store.last()?.take.number ?? '')}, ${this.then()?.view ?? ''}`,
   );
-  protected readonly whereWords = computed(
-    () => `${clipTime(this.clock.positionMs())} ${this.active()?.view ?? ''}`,
-  );
+  protected readonly whereWords = computed(() => {
+    const span = this.span();
+    const view = this.active()?.view ?? '';
+    return span
+      ? `${clipTime(span.startMs)} to ${clipTime(span.endMs)} ${view}`
+      : `${clipTime(this.clock.positionMs())} ${view}`;
+  });
   protected readonly cues = computed(() => {
     const seen = new Set(this.store.marks().flatMap((mark) => (mark.mark === 'seen' ? [mark.faultId] : [])));
     return (this.store.board()?.lift.faults ?? []).flatMap((fault) =>
       seen.has(fault.id) ? [fault.cue] : [],
     );
   });
-  protected readonly notice = computed(() => {
-    const closed = this.closed();
-    if (closed) return { words: closed, act: null };
-    const state = this.lease.state();
-    const again = { label: 'Pick it up', run: () => void this.lease.ask() };
-    switch (state.kind) {
-      case 'taken':
-        return this.lease.wantsNext()
-          ? {
-              words: `${state.by.name} is answering this take. You get it as soon as it is put back.`,
-              act: null,
-            }
-          : {
-              words: `${state.by.name} is answering this take. You can look, not write.`,
-              act: { label: 'Take it when it is free', run: () => this.waitForIt() },
-            };
-      case 'free':
-        return { words: 'Nobody has this take now.', act: again };
-      case 'lapsed':
-        return {
-          words:
-            'The server is out of reach, so your hold on this take ran out. What you write is kept here.',
-          act: again,
-        };
-      case 'failed':
-        return { words: state.problem.detail, act: again };
-      default:
-        return null;
-    }
-  });
+  protected readonly notice = computed(() =>
+    noticeOf(this.closed(), this.lease.state(), this.lease.wantsNext()),
+  );
+  /** The stretch a comment is about, when it is about more than an instant. */
+  private readonly span = computed(() => (this.isOverSpan() ? this.clock.loop() : null));
 
   constructor() {
     effect(() => {
@@ -206,8 +182,17 @@ export class BoardPage {
       const view = this.active()?.view ?? 'side';
       this.location.replaceState(`/board/${this.takeId()}`, `view=${view}#t=${seconds}`);
     });
+    let before: LeaseState['kind'] = 'asking';
+    effect(() => {
+      const { kind } = this.lease.state();
+      if (kind === 'held') untracked(() => this.regained(before));
+      before = kind;
+    });
     const remove = this.keys.register(boardKeys(this), (sign) => this.startTyping(sign));
-    inject(DestroyRef).onDestroy(remove);
+    inject(DestroyRef).onDestroy(() => {
+      remove();
+      void this.leave();
+    });
   }
 
   /** Chooses the view that is spoken about. */
@@ -249,6 +234,11 @@ export class BoardPage {
             endMs: Math.min(this.clock.durationMs(), at + LOOP_AROUND_MS),
           },
     );
+  }
+
+  /** Makes the next comment about the stretch that repeats, or about the instant again. */
+  turnSpan(): void {
+    this.isOverSpan.update((isOver) => !isOver && this.clock.loop() !== null);
   }
 
   /** Sets one end of the stretch that repeats to the picture that shows. */
@@ -294,7 +284,7 @@ export class BoardPage {
   }
 
   pressFaultAt(index: number): void {
-    const fault = this.store.board()?.lift.faults[index];
+    const fault = inPhases(this.store.board()?.lift.faults ?? []).flatMap((group) => group.faults)[index];
     if (fault) void this.pressFault(fault.id);
   }
 
@@ -331,8 +321,15 @@ export class BoardPage {
 
   protected async comment(): Promise<void> {
     const at = this.here();
-    const comment = at && (await this.store.comment(at));
+    if (!at) return;
+    const span = this.span();
+    const comment = await this.store.comment(
+      span
+        ? { ...at, atMs: Math.round(span.startMs), endMs: Math.min(this.lastMs(), Math.round(span.endMs)) }
+        : at,
+    );
     if (!comment) return;
+    this.isOverSpan.set(false);
     this.openId.set(comment.id);
     // The keys act on the picture again; the next letter starts the next comment.
     this.composer()?.nativeElement.blur();
@@ -346,7 +343,12 @@ export class BoardPage {
 
   async send(): Promise<void> {
     const board = this.store.board();
-    if (!board || !this.canWrite() || missingWords(this.store.draft(), board.lift).length > 0) return;
+    if (!board || !this.canWrite()) return;
+    const missing = missingWords(this.store.draft(), board.lift);
+    if (missing.length > 0) {
+      this.snackbar.say(`Not sent yet. ${missing.join(' ')}`);
+      return;
+    }
     if (!(await this.store.send())) return;
     this.lease.end();
     const words = `Sent to ${firstName(board.member.name)}.`;
@@ -355,19 +357,27 @@ export class BoardPage {
     await this.router.navigate(next ? ['/board', next] : ['/queue']);
   }
 
-  protected async sendReply(field: HTMLInputElement): Promise<void> {
-    const body = field.value.trim();
-    if (body !== '' && (await this.store.reply(body))) field.value = '';
+  protected async sendReply({ body, done }: { body: string; done: () => void }): Promise<void> {
+    if (await this.store.reply(body)) done();
   }
 
-  protected tryAgain(): void {
-    void this.store.flush();
+  protected async deleteMeasure(one: MeasureDto): Promise<void> {
+    const { clipId, atMs, kind, points, faultId } = one;
+    if (!(await this.store.deleteMeasure(one.id))) return;
+    this.snackbar.offerUndo('Measure deleted.', () => {
+      void this.store.addMeasure({ clipId, atMs, kind, points, faultId });
+    });
+  }
+
+  protected actOn(act: 'pick-up' | 'wait'): void {
+    if (act === 'wait') this.lease.wantsNext.set(true);
     void this.lease.ask();
   }
 
-  protected setSpeed(event: Event): void {
-    const speed = SPEEDS.find((one) => String(one) === (event.target as HTMLSelectElement).value);
-    if (speed) this.clock.setSpeed(speed);
+  /** Nothing can be written on a take that is not held, so it is asked for first. */
+  protected async tryAgain(): Promise<void> {
+    await this.lease.ask();
+    await this.store.flush();
   }
 
   protected sizeOf(clip: ClipDto): { width: number; height: number } {
@@ -389,8 +399,12 @@ export class BoardPage {
   private here(): Instant | null {
     const clip = this.active();
     if (!clip) return null;
-    const last = Math.max(0, (clip.durationMs ?? 0) - 1);
-    return { clipId: clip.id, atMs: Math.min(last, Math.round(this.clock.positionMs())) };
+    return { clipId: clip.id, atMs: Math.min(this.lastMs(), Math.round(this.clock.positionMs())) };
+  }
+
+  /** The last instant of the clip that is spoken about. */
+  private lastMs(): number {
+    return Math.max(0, (this.active()?.durationMs ?? 0) - 1);
   }
 
   private startTyping(sign: string): void {
@@ -403,9 +417,16 @@ export class BoardPage {
     field.setSelectionRange(words.length, words.length);
   }
 
-  private waitForIt(): void {
-    this.lease.wantsNext.set(true);
-    void this.lease.ask();
+  /** The take is this coach's again: words that waited are kept, and what another coach did meanwhile is fetched. */
+  private regained(before: LeaseState['kind']): void {
+    if (before === 'lapsed') void this.store.flush();
+    else if (before === 'taken' || before === 'free') void this.store.load(this.takeId());
+  }
+
+  /** Words first, for only who holds the take may keep them. */
+  private async leave(): Promise<void> {
+    await this.store.flush();
+    await this.lease.leave();
   }
 
   private async openTake(takeId: string): Promise<void> {

@@ -1,7 +1,7 @@
 import { computed, DestroyRef, inject, Injectable, signal } from '@angular/core';
 import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { debounceTime, filter, firstValueFrom, merge } from 'rxjs';
-import type { BoardDto, ClipDto, CommentDto, DraftAnswer, MarkDto, MeasureDto, View } from '@contract';
+import type { BoardDto, ClipDto, CommentDto, DraftAnswer, MarkDto, MeasureDto } from '@contract';
 import { problemOf, type Problem } from '../shared/problems/problem';
 import { SessionStore } from '../session/session-store';
 import { LiveEvents } from '../shell/live-events';
@@ -66,11 +66,20 @@ export class BoardStore {
     merge(changes, live.resumed)
       .pipe(debounceTime(GATHER_MS), takeUntilDestroyed(destroyRef))
       .subscribe(() => void this.refresh());
-    destroyRef.onDestroy(() => void this.flush());
   }
 
+  /**
+   * Fetches a take, with what was written on it so far: words that never reached the server win over the server's.
+   * What still waits to be kept of the take shown before goes first.
+   */
   async load(takeId: string): Promise<void> {
     this.problem.set(null);
+    if (this.take()?.id !== takeId) {
+      await this.flush();
+      this.board.set(null);
+      this.writeProblem.set(null);
+      this.saving.set('nothing');
+    }
     try {
       const board = await firstValueFrom(this.api.board(takeId));
       this.show(board);
@@ -82,10 +91,6 @@ export class BoardStore {
     }
   }
 
-  clipOf(view: View): ClipDto | null {
-    return this.clips().find((clip) => clip.view === view) ?? null;
-  }
-
   /** Changes the draft; it is kept here at once and on the server a moment later. */
   say(change: Partial<DraftAnswer>): void {
     const takeId = this.take()?.id;
@@ -95,8 +100,8 @@ export class BoardStore {
     this.save();
   }
 
-  /** Comments at an instant with what stands in the composer. */
-  async comment(at: Instant): Promise<CommentDto | null> {
+  /** Comments at an instant, or over a span, with what stands in the composer. */
+  async comment(at: Instant & { readonly endMs?: number }): Promise<CommentDto | null> {
     const body = this.draft().composer.trim();
     if (body === '') return null;
     const comment = await this.add({ ...at, body });
@@ -155,12 +160,13 @@ export class BoardStore {
     return added !== null;
   }
 
-  async deleteMeasure(measureId: string): Promise<void> {
+  async deleteMeasure(measureId: string): Promise<boolean> {
     const done = await this.write(async () => {
       await firstValueFrom(this.api.deleteMeasure(measureId));
       return true;
     });
     if (done) this.measures.update((all) => all.filter((one) => one.id !== measureId));
+    return done === true;
   }
 
   /** Marks the top or bottom of a rep at an instant; the same again takes it off. */

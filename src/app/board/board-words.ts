@@ -1,4 +1,16 @@
-import type { Call, DraftAnswer, LiftDto, Mark, MarkDto, NewAnswerBody, TakeState } from './board-types';
+import { parseTempo } from '@calc/tempo';
+import {
+  PHASES,
+  type Call,
+  type DraftAnswer,
+  type FaultDto,
+  type LiftDto,
+  type Mark,
+  type MarkDto,
+  type Phase,
+  type TakeState,
+} from '@contract';
+import type { NewAnswer } from './board-api';
 
 export const CALL_LABELS: Readonly<Record<Call, string>> = {
   go: 'as planned',
@@ -34,12 +46,16 @@ export function missingWords(draft: DraftAnswer, lift: LiftDto): string[] {
   if (draft.call === 'scale' && !lift.scales.some((scale) => scale.id === draft.scaleId)) {
     missing.push('Choose the scale to use.');
   }
+  const tempo = draft.tempo?.trim() ?? '';
+  if (tempo !== '' && !parseTempo(tempo)) {
+    missing.push('Write the tempo as four counts, for instance 30X0 or 10-0-2-0.');
+  }
   if (draft.refilm?.views.length === 0) missing.push('Choose the views to film again.');
   return missing;
 }
 
 /** The draft as an answer; null while something is missing. */
-export function answerOf(draft: DraftAnswer, lift: LiftDto): NewAnswerBody | null {
+export function answerOf(draft: DraftAnswer, lift: LiftDto): NewAnswer | null {
   if (!draft.call || missingWords(draft, lift).length > 0) return null;
   const tempo = draft.tempo?.trim() ?? '';
   return {
@@ -76,4 +92,17 @@ export const MANY_COMMENTS = 3;
 /** The digit that marks the n-th fault, from 0; none beyond the tenth. */
 export function faultKey(index: number): string | null {
   return index < 9 ? String(index + 1) : index === 9 ? '0' : null;
+}
+
+/** Faults of one phase, in the order of the lift's list. */
+export interface PhaseFaults {
+  readonly phase: Phase;
+  readonly faults: readonly FaultDto[];
+}
+
+/** The faults as the checklist shows and numbers them: by phase, in the order in which a rep goes through them. */
+export function inPhases(faults: readonly FaultDto[]): PhaseFaults[] {
+  return PHASES.map((phase) => ({ phase, faults: faults.filter((fault) => fault.phase === phase) })).filter(
+    (group) => group.faults.length > 0,
+  );
 }

@@ -3,9 +3,9 @@ import type { FaultDto, MarkDto } from '@contract';
 import { KeyCap } from '../shared/key-cap/key-cap';
 import { StateMark } from '../shared/marks/state-mark';
 import { clipTime } from '../shared/times/time-words';
-import { faultKey } from './board-words';
+import { faultKey, inPhases } from './board-words';
 
-/** The faults of the lift with their marks, the last take's beside them; a press moves a mark on. */
+/** The faults of the lift by phase, with their marks, the last take's beside them; a press moves a mark on. */
 @Component({
   selector: 'mf-checklist',
   imports: [KeyCap, StateMark],
@@ -16,40 +16,43 @@ import { faultKey } from './board-words';
         <span>now · take {{ number }}</span>
       }
     </div>
-    <ul class="mf-list">
-      @for (row of rows(); track row.fault.id) {
-        <li>
-          <button
-            type="button"
-            class="fault"
-            [disabled]="isReadOnly()"
-            [attr.aria-label]="row.label"
-            (click)="pressed.emit(row.fault.id)"
-          >
-            @if (row.key) {
-              <kbd mf-key-cap>{{ row.key }}</kbd>
-            } @else {
-              <span class="no-key"></span>
-            }
-            <mf-state-mark [mark]="row.mark?.mark ?? null" aria-hidden="true" />
-            <span class="name">{{ row.fault.name }}</span>
-          </button>
-          @if (row.mark?.atMs; as atMs) {
+    @for (group of groups(); track group.phase) {
+      <h3 [id]="'phase-' + group.phase">{{ group.phase }}</h3>
+      <ul class="mf-list" [attr.aria-labelledby]="'phase-' + group.phase">
+        @for (row of group.rows; track row.fault.id) {
+          <li>
             <button
               type="button"
-              class="at mf-figures"
-              [attr.aria-label]="'Go to ' + clipTime(atMs)"
-              (click)="jumped.emit(row.mark)"
+              class="fault"
+              [disabled]="isReadOnly()"
+              [attr.aria-label]="row.label"
+              (click)="pressed.emit(row.fault.id)"
             >
-              {{ clipTime(atMs) }}
+              @if (row.key) {
+                <kbd mf-key-cap>{{ row.key }}</kbd>
+              } @else {
+                <span class="no-key"></span>
+              }
+              <mf-state-mark [mark]="row.mark?.mark ?? null" aria-hidden="true" />
+              <span class="name">{{ row.fault.name }}</span>
             </button>
-          }
-          @if (lastNumber()) {
-            <mf-state-mark class="last" [mark]="row.last" [sizePx]="13" />
-          }
-        </li>
-      }
-    </ul>
+            @if (row.at) {
+              <button
+                type="button"
+                class="at mf-figures"
+                [attr.aria-label]="'Go to ' + row.at"
+                (click)="jumped.emit(row.mark)"
+              >
+                {{ row.at }}
+              </button>
+            }
+            @if (lastNumber()) {
+              <mf-state-mark class="last" [mark]="row.last" [sizePx]="13" />
+            }
+          </li>
+        }
+      </ul>
+    }
     @if (!isReadOnly() && hasUnmarked()) {
       <button type="button" class="mf-link-button" (click)="restCleared.emit()">Mark the rest clear</button>
     }
@@ -68,19 +71,27 @@ export class Checklist {
   readonly jumped = output<MarkDto | undefined>();
   readonly restCleared = output();
 
-  protected readonly clipTime = clipTime;
-  protected readonly hasUnmarked = computed(() => this.rows().some((row) => !row.mark));
-  protected readonly rows = computed(() =>
-    this.faults().map((fault, index) => {
-      const mark = this.marks().find((one) => one.faultId === fault.id);
-      const words = mark ? mark.mark : 'not marked';
-      return {
-        fault,
-        mark,
-        key: faultKey(index),
-        label: `${fault.name}, ${fault.phase}: ${words}`,
-        last: this.lastMarks().find((one) => one.faultId === fault.id)?.mark ?? null,
-      };
-    }),
+  protected readonly hasUnmarked = computed(() =>
+    this.faults().some((fault) => !this.marks().some((mark) => mark.faultId === fault.id)),
   );
+  protected readonly groups = computed(() => {
+    let count = 0;
+    return inPhases(this.faults()).map(({ phase, faults }) => ({
+      phase,
+      rows: faults.map((fault) => this.rowOf(fault, count++)),
+    }));
+  });
+
+  private rowOf(fault: FaultDto, index: number) {
+    const mark = this.marks().find((one) => one.faultId === fault.id);
+    const words = mark ? mark.mark : 'not marked';
+    return {
+      fault,
+      mark,
+      at: mark && mark.atMs !== null ? clipTime(mark.atMs) : null,
+      key: faultKey(index),
+      label: `${fault.name}, ${fault.phase}: ${words}`,
+      last: this.lastMarks().find((one) => one.faultId === fault.id)?.mark ?? null,
+    };
+  }
 }

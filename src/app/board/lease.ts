@@ -67,15 +67,17 @@ export class Lease {
     destroyRef.onDestroy(() => {
       window?.removeEventListener('pagehide', hide);
       window?.removeEventListener('pageshow', show);
-      void this.leave();
+      clearTimeout(this.timer);
     });
   }
 
-  /** Picks a take up. */
+  /** Picks a take up; another that is held is put back first. */
   async open(takeId: string): Promise<void> {
+    const left = this.takeId === takeId ? null : this.leave();
     this.takeId = takeId;
     this.wantsNext.set(false);
     this.state.set({ kind: 'asking' });
+    await left;
     await this.ask();
   }
 

@@ -54,12 +54,13 @@ import { QueueApi } from './queue-api';
                 Try again
               </button>
             </li>
-          } @empty {
-            <mf-empty-state icon="check" heading="All clips can be played">
-              <p><a routerLink="/queue">Back to the queue</a></p>
-            </mf-empty-state>
           }
         </ul>
+        @if (takes.length === 0) {
+          <mf-empty-state icon="check" heading="All clips can be played">
+            <p><a routerLink="/queue">Back to the queue</a></p>
+          </mf-empty-state>
+        }
       } @else if (!problem()) {
         <mf-skeleton shape="row" />
       }

@@ -1,6 +1,16 @@
 import { randomBytes } from 'node:crypto';
-import type { AssignmentDto, InvitationDto, LiftDto, MailboxDto, SessionDto } from '../../../server/contract';
+import { readFile } from 'node:fs/promises';
+import type {
+  AssignmentDto,
+  BoardDto,
+  InvitationDto,
+  LiftDto,
+  MailboxDto,
+  SessionDto,
+  TakeDto,
+} from '../../../server/contract';
 import type { Caller } from '../../support/caller';
+import { phoneClip } from './phone-clips';
 import { caller } from './stage-access';
 
 export interface Person {
@@ -111,4 +121,62 @@ export async function makeWorld(): Promise<World> {
     audience: { all: true },
   });
   return { owner, coach, member, lift, assignment };
+}
+
+/** A take of the member with small drawn clips, handed in and waiting. */
+export async function filmedTake(member: Person, assignmentId: string): Promise<TakeDto> {
+  const take = await member.api.ok<TakeDto>('POST', `/api/assignments/${assignmentId}/takes`, {
+    load: '24 kg',
+  });
+  for (const view of take.views) {
+    const bytes = await readFile(await phoneClip(`plain-${view}.mp4`));
+    const sent = await member.api.upload(`/api/takes/${take.id}/clips/${view}`, new Uint8Array(bytes));
+    if (sent.status !== 201) throw new Error(`the ${view} clip was answered ${String(sent.status)}`);
+  }
+  await member.api.ok('POST', `/api/takes/${take.id}/submit`);
+  for (let tries = 0; tries < 300; tries += 1) {
+    const now = await member.api.get<TakeDto>(`/api/takes/${take.id}`);
+    if (now.state === 'waiting') return now;
+    if (now.state !== 'processing') throw new Error(`the take is ${now.state}`);
+    await new Promise((resolve) => setTimeout(resolve, 200));
+  }
+  throw new Error('the clips were not ready within a minute');
+}
+
+/** Answers a waiting take with a comment, marks and a request for another take. */
+export async function answeredTake(coach: Person, take: TakeDto): Promise<void> {
+  const at = (path: string) => `/api/takes/${take.id}/${path}`;
+  await coach.api.ok('POST', at('pick-up'));
+  const board = await coach.api.get<BoardDto>(at('board'));
+  const side = board.clips.find((clip) => clip.view === 'side');
+  const [fault] = board.lift.faults;
+  if (!side || !fault) throw new Error('the take has no side clip, or its lift no fault');
+  await coach.api.ok('POST', at('comments'), {
+    clipId: side.id,
+    atMs: 700,
+    body: 'Here the heels leave the floor',
+  });
+  await coach.api.ok('PUT', at('marks'), {
+    marks: board.lift.faults.map((one) =>
+      one.id === fault.id
+        ? { faultId: one.id, mark: 'seen', clipId: side.id, atMs: 700 }
+        : { faultId: one.id, mark: 'clear' },
+    ),
+  });
+  await coach.api.ok('POST', at('measures'), {
+    clipId: side.id,
+    atMs: 700,
+    kind: 'angle',
+    points: [
+      [0.5, 0.3],
+      [0.45, 0.5],
+      [0.55, 0.65],
+    ],
+  });
+  await coach.api.ok('POST', at('answer'), {
+    topCue: fault.cue,
+    call: 'scale',
+    scaleId: board.lift.scales[0]?.id,
+    refilm: { views: ['side'], note: 'Two slow ones' },
+  });
 }
