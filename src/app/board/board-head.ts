@@ -11,6 +11,7 @@ import { dayAndTime } from '../shared/times/time-words';
 /** Who, which lift, what is at stake and until when; what hurts stands first. */
 @Component({
   selector: 'mf-board-head',
+  host: { role: 'banner' },
   imports: [KeyCap, Logo, RouterLink, TimeLeft],
   template: `
     <a class="home" routerLink="/queue" aria-label="Back to the queue"><mf-logo /></a>
@@ -110,7 +111,8 @@ export class BoardHead {
 
   protected readonly about = computed(() => {
     const { member, take, assignment } = this.board();
-    const load = take.load ?? assignment.load;
+    const isOther = take.load !== null && assignment.load !== null && take.load !== assignment.load;
+    const load = isOther ? `${take.load}, asked ${assignment.load}` : (take.load ?? assignment.load);
     return [member.name, load, take.implement, member.kit].filter((part) => part).join(' · ');
   });
   protected readonly trains = computed(() => {

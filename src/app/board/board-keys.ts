@@ -2,18 +2,16 @@ import type { MeasureKind, View } from '@contract';
 import type { KeyBinding } from '../shared/keys/key-binding';
 import { faultKey } from './board-words';
 import type { PlaybackClock } from './playback/playback-clock';
+import type { Seeing } from './seeing';
 
 /** What the keys act on. Letters are not bound: they start a comment. */
 interface KeyedBoard {
   readonly clock: PlaybackClock;
+  readonly seeing: Seeing;
   choose(view: View): void;
   step(frames: number): void;
   seek(toMs: number): void;
   arrow(byX: number, byY: number): void;
-  turnLoop(): void;
-  turnSpan(): void;
-  setLoopEnd(end: 'start' | 'end'): void;
-  turnPlumb(): void;
   turnBeside(): void;
   measure(kind: MeasureKind): void;
   rep(kind: 'top' | 'bottom'): void;
@@ -38,17 +36,17 @@ export function boardKeys(board: KeyedBoard): KeyBinding[] {
     { key: 'End', label: 'to the end', group: see, run: () => board.seek(board.clock.durationMs()) },
     { key: ',', label: 'slower', group: see, run: () => board.clock.shiftSpeed(-1) },
     { key: '.', label: 'faster', group: see, run: () => board.clock.shiftSpeed(1) },
-    { key: '[', label: 'repeat from here', group: see, run: () => board.setLoopEnd('start') },
-    { key: ']', label: 'repeat up to here', group: see, run: () => board.setLoopEnd('end') },
-    { key: '\\', label: 'repeat around here, or stop', group: see, run: () => board.turnLoop() },
-    { key: '|', label: 'plumb line', group: see, run: () => board.turnPlumb() },
+    { key: '[', label: 'repeat from here', group: see, run: () => board.seeing.setLoopEnd('start') },
+    { key: ']', label: 'repeat up to here', group: see, run: () => board.seeing.setLoopEnd('end') },
+    { key: '\\', label: 'repeat around here, or stop', group: see, run: () => board.seeing.turnLoop() },
+    { key: '|', label: 'plumb line', group: see, run: () => board.seeing.turnPlumb() },
     { key: '&', label: 'the earlier take beside', group: see, run: () => board.turnBeside() },
     { key: 'Shift+ArrowLeft', label: 'speak about the front', group: say, run: () => board.choose('front') },
     { key: 'Shift+ArrowRight', label: 'speak about the side', group: say, run: () => board.choose('side') },
     { key: 'ArrowUp', label: 'the comment before', group: say, run: () => board.arrow(0, -1) },
     { key: 'ArrowDown', label: 'the next comment', group: say, run: () => board.arrow(0, 1) },
     { key: 'Enter', label: 'comment here (or just type)', group: say, run: () => board.focusComposer() },
-    { key: ';', label: 'comment on what repeats', group: say, run: () => board.turnSpan() },
+    { key: ';', label: 'comment on what repeats', group: say, run: () => board.seeing.turnSpan() },
     ...Array.from({ length: 10 }, (_, index): KeyBinding => ({
       key: faultKey(index) ?? '',
       label: `fault ${String(index + 1)}: seen, clear, hidden`,

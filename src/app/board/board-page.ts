@@ -33,25 +33,22 @@ import { boardKeys } from './board-keys';
 import { NOTICE_ACTS, noticeOf } from './board-notice';
 import { BoardPlayer } from './board-player';
 import { BoardStore, type Instant } from './board-store';
-import { closedWords, inPhases, missingWords } from './board-words';
+import { closedWords, commentBeside, inPhases, missingWords } from './board-words';
 import { Checklist } from './checklist';
 import { CommentList } from './comment-list';
 import { DraftMirror } from './draft-mirror';
 import { Lease, type LeaseState } from './lease';
 import { MeasureList } from './measure-list';
 import { measuredWords, Measuring } from './measuring';
-import { PlaybackClock } from './playback/playback-clock';
 import { Rail } from './rail';
 import { RepTable } from './rep-table';
 import { SaidBefore } from './said-before';
+import { Seeing } from './seeing';
 import { SentAnswer } from './sent-answer';
 import { Transport } from './transport';
 
 /** A measure or a drawing shows while the picture is this near its instant, ms. */
 const NEAR_MS = 60;
-/** A repeat without ends of its own takes this much on either side of the picture, ms. */
-const LOOP_AROUND_MS = 700;
-
 /** The board: one take, seen from all its views on one clock, and answered. */
 @Component({
   selector: 'mf-board-page',
@@ -74,7 +71,7 @@ const LOOP_AROUND_MS = 700;
     SentAnswer,
     Transport,
   ],
-  providers: [BoardStore, DraftMirror, Lease, Measuring],
+  providers: [BoardStore, DraftMirror, Lease, Measuring, Seeing],
   host: { class: 'mf-night' },
   templateUrl: './board-page.html',
   styleUrl: './board-page.scss',
@@ -93,7 +90,8 @@ export class BoardPage {
   protected readonly lease = inject(Lease);
   protected readonly measuring = inject(Measuring);
   protected readonly keys = inject(Keys);
-  readonly clock = new PlaybackClock(() => performance.now());
+  readonly seeing = inject(Seeing);
+  readonly clock = this.seeing.clock;
 
   readonly takeId = input.required<string>();
   /** The view that is spoken about, from the address. */
@@ -102,10 +100,7 @@ export class BoardPage {
   protected readonly noticeActs = NOTICE_ACTS;
   protected readonly measuredWords = measuredWords;
 
-  protected readonly hasPlumb = signal(false);
   protected readonly showsThen = signal(true);
-  /** A comment is about the stretch that repeats, not about one instant. */
-  protected readonly isOverSpan = signal(false);
   protected readonly openId = signal<string | null>(null);
   private readonly chosenView = signal<View | null>(null);
   private readonly thenView = signal<View | null>(null);
@@ -137,7 +132,7 @@ export class BoardPage {
     () => `take ${String(this.store.last()?.take.number ?? '')}, ${this.then()?.view ?? ''}`,
   );
   protected readonly whereWords = computed(() => {
-    const span = this.span();
+    const span = this.seeing.span();
     const view = this.active()?.view ?? '';
     return span
       ? `${clipTime(span.startMs)} to ${clipTime(span.endMs)} ${view}`
@@ -152,8 +147,6 @@ export class BoardPage {
   protected readonly notice = computed(() =>
     noticeOf(this.closed(), this.lease.state(), this.lease.wantsNext()),
   );
-  /** The stretch a comment is about, when it is about more than an instant. */
-  private readonly span = computed(() => (this.isOverSpan() ? this.clock.loop() : null));
 
   constructor() {
     effect(() => {
@@ -165,15 +158,6 @@ export class BoardPage {
         (clip) => clip?.durationMs ?? 0,
       );
       this.clock.durationMs.set(Math.max(0, ...lengths));
-    });
-    effect((onCleanup) => {
-      if (!this.clock.isPlaying()) return;
-      const follow = (): void => {
-        this.clock.tick();
-        frame = requestAnimationFrame(follow);
-      };
-      let frame = requestAnimationFrame(follow);
-      onCleanup(() => cancelAnimationFrame(frame));
     });
     // The address names the view and the instant while the picture stands, so that it can be handed on.
     effect(() => {
@@ -211,10 +195,6 @@ export class BoardPage {
     this.clock.seek(toMs);
   }
 
-  turnPlumb(): void {
-    this.hasPlumb.update((has) => !has);
-  }
-
   turnBeside(): void {
     this.showsThen.update((shows) => !shows);
   }
@@ -223,42 +203,9 @@ export class BoardPage {
     this.thenView.set(this.then()?.view === 'front' ? 'side' : 'front');
   }
 
-  /** Repeats a stretch around the picture, or stops repeating. */
-  turnLoop(): void {
-    const at = this.clock.positionMs();
-    this.clock.setLoop(
-      this.clock.loop()
-        ? null
-        : {
-            startMs: Math.max(0, at - LOOP_AROUND_MS),
-            endMs: Math.min(this.clock.durationMs(), at + LOOP_AROUND_MS),
-          },
-    );
-  }
-
-  /** Makes the next comment about the stretch that repeats, or about the instant again. */
-  turnSpan(): void {
-    this.isOverSpan.update((isOver) => !isOver && this.clock.loop() !== null);
-  }
-
-  /** Sets one end of the stretch that repeats to the picture that shows. */
-  setLoopEnd(end: 'start' | 'end'): void {
-    const at = this.clock.positionMs();
-    const span = this.clock.loop() ?? { startMs: 0, endMs: this.clock.durationMs() };
-    this.clock.setLoop(end === 'start' ? { ...span, startMs: at } : { ...span, endMs: at });
-  }
-
   /** Goes to the next comment or the one before. */
   moveComment(by: 1 | -1): void {
-    const comments = this.store.comments();
-    const at = this.clock.positionMs();
-    const present = comments.findIndex((comment) => comment.id === this.openId());
-    const next =
-      present >= 0
-        ? comments[present + by]
-        : by > 0
-          ? comments.find((comment) => comment.atMs > at)
-          : [...comments].reverse().find((comment) => comment.atMs < at);
+    const next = commentBeside(this.store.comments(), this.openId(), this.clock.positionMs(), by);
     if (next) this.open(next);
   }
 
@@ -322,14 +269,14 @@ export class BoardPage {
   protected async comment(): Promise<void> {
     const at = this.here();
     if (!at) return;
-    const span = this.span();
+    const span = this.seeing.span();
     const comment = await this.store.comment(
       span
         ? { ...at, atMs: Math.round(span.startMs), endMs: Math.min(this.lastMs(), Math.round(span.endMs)) }
         : at,
     );
     if (!comment) return;
-    this.isOverSpan.set(false);
+    this.seeing.isOverSpan.set(false);
     this.openId.set(comment.id);
     // The keys act on the picture again; the next letter starts the next comment.
     this.composer()?.nativeElement.blur();

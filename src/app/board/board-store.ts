@@ -31,6 +31,7 @@ export class BoardStore {
   private readonly api = inject(BoardApi);
   private readonly mirror = inject(DraftMirror);
   private readonly session = inject(SessionStore);
+  private isCommenting = false;
   private saveTimer: ReturnType<typeof setTimeout> | undefined;
   /** Writes go one after the other, so that an older one never overtakes a newer. */
   private writing: Promise<unknown> = Promise.resolve();
@@ -103,8 +104,11 @@ export class BoardStore {
   /** Comments at an instant, or over a span, with what stands in the composer. */
   async comment(at: Instant & { readonly endMs?: number }): Promise<CommentDto | null> {
     const body = this.draft().composer.trim();
-    if (body === '') return null;
+    // Enter held or pressed twice makes one comment.
+    if (body === '' || this.isCommenting) return null;
+    this.isCommenting = true;
     const comment = await this.add({ ...at, body });
+    this.isCommenting = false;
     // Only what was sent is cleared: the coach may have typed on.
     if (comment && this.draft().composer.trim() === body) this.say({ composer: '' });
     return comment;
@@ -171,12 +175,15 @@ export class BoardStore {
 
   /** Marks the top or bottom of a rep at an instant; the same again takes it off. */
   async pressRep(at: Instant, kind: 'top' | 'bottom'): Promise<void> {
-    const known = this.repMarks().find((one) => one.clipId === at.clipId)?.marks ?? [];
-    const isOff = known.some((mark) => mark.kind === kind && mark.atMs === at.atMs);
-    const others = known.filter((mark) => mark.atMs !== at.atMs);
-    const marks = isOff ? others : [...others, { atMs: at.atMs, kind }];
-    const kept = await this.write(() => firstValueFrom(this.api.putRepMarks(at.clipId, marks)));
-    if (kept) this.repMarks.update((all) => [...all.filter((one) => one.clipId !== at.clipId), kept]);
+    // All marks of the clip go as a whole, so each press builds on what the press before it made.
+    await this.write(async () => {
+      const known = this.repMarks().find((one) => one.clipId === at.clipId)?.marks ?? [];
+      const isOff = known.some((mark) => mark.kind === kind && mark.atMs === at.atMs);
+      const others = known.filter((mark) => mark.atMs !== at.atMs);
+      const marks = isOff ? others : [...others, { atMs: at.atMs, kind }];
+      const kept = await firstValueFrom(this.api.putRepMarks(at.clipId, marks));
+      this.repMarks.update((all) => [...all.filter((one) => one.clipId !== at.clipId), kept]);
+    });
   }
 
   /** Sends the answer. @returns whether it is sent */

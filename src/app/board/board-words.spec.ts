@@ -1,7 +1,16 @@
 import { describe, expect, it } from 'vitest';
-import type { LiftDto, MarkDto } from '@contract';
+import type { CommentDto, FaultDto, LiftDto, MarkDto } from '@contract';
 import { EMPTY_DRAFT } from './draft-mirror';
-import { answerOf, closedWords, faultKey, missingWords, nextMark, withMark } from './board-words';
+import {
+  answerOf,
+  closedWords,
+  commentBeside,
+  faultKey,
+  inPhases,
+  missingWords,
+  nextMark,
+  withMark,
+} from './board-words';
 
 const lift = {
   scales: [{ id: 's1', name: 'Squat to a chair', level: 'easier', note: '' }],
@@ -60,4 +69,39 @@ it('says why a take that does not wait cannot be answered', () => {
   expect(closedWords('waiting')).toBeNull();
   expect(closedWords('answered')).toMatch(/answered/);
   expect(closedWords('withdrawn')).toMatch(/took this take back/);
+});
+
+it('lists faults in the order in which a rep goes through them, and no empty phase', () => {
+  const faults = [
+    { id: 'a', phase: 'up' },
+    { id: 'b', phase: 'set-up' },
+    { id: 'c', phase: 'up' },
+  ] as FaultDto[];
+  expect(inPhases(faults).map((group) => [group.phase, group.faults.map((fault) => fault.id)])).toEqual([
+    ['set-up', ['b']],
+    ['up', ['a', 'c']],
+  ]);
+});
+
+it('asks for a tempo of four counts, or none', () => {
+  const draft = { ...EMPTY_DRAFT, topCue: 'Sit back', call: 'go' as const };
+  expect(missingWords({ ...draft, tempo: '30' }, lift)).toHaveLength(1);
+  expect(answerOf({ ...draft, tempo: '30' }, lift)).toBeNull();
+  expect(answerOf({ ...draft, tempo: '30X0' }, lift)?.tempo).toBe('30X0');
+});
+
+describe('going from comment to comment', () => {
+  const comments = [100, 500, 900].map((atMs) => ({ id: `k${String(atMs)}`, atMs })) as CommentDto[];
+
+  it('starts from the open one', () => {
+    expect(commentBeside(comments, 'k500', 0, 1)?.id).toBe('k900');
+    expect(commentBeside(comments, 'k500', 0, -1)?.id).toBe('k100');
+    expect(commentBeside(comments, 'k900', 0, 1)).toBeUndefined();
+  });
+
+  it('starts from the instant that shows while none is open', () => {
+    expect(commentBeside(comments, null, 500, 1)?.id).toBe('k900');
+    expect(commentBeside(comments, null, 500, -1)?.id).toBe('k100');
+    expect(commentBeside(comments, null, 50, -1)).toBeUndefined();
+  });
 });

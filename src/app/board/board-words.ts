@@ -2,6 +2,7 @@ import { parseTempo } from '@calc/tempo';
 import {
   PHASES,
   type Call,
+  type CommentDto,
   type DraftAnswer,
   type FaultDto,
   type LiftDto,
@@ -105,4 +106,21 @@ export function inPhases(faults: readonly FaultDto[]): PhaseFaults[] {
   return PHASES.map((phase) => ({ phase, faults: faults.filter((fault) => fault.phase === phase) })).filter(
     (group) => group.faults.length > 0,
   );
+}
+
+/**
+ * The comment after (1) or before (-1) the open one, or, while none is open, after or before the instant that shows.
+ * @param comments in order of time
+ */
+export function commentBeside(
+  comments: readonly CommentDto[],
+  openId: string | null,
+  atMs: number,
+  by: 1 | -1,
+): CommentDto | undefined {
+  const open = comments.findIndex((comment) => comment.id === openId);
+  if (open >= 0) return comments[open + by];
+  return by > 0
+    ? comments.find((comment) => comment.atMs > atMs)
+    : comments.filter((comment) => comment.atMs < atMs).at(-1);
 }

@@ -90,7 +90,8 @@ export class Checklist {
       mark,
       at: mark && mark.atMs !== null ? clipTime(mark.atMs) : null,
       key: faultKey(index),
-      label: `${fault.name}, ${fault.phase}: ${words}`,
+      // What is to be read on the button, its key too, leads its name.
+      label: `${[faultKey(index), fault.name].filter((part) => part).join(' ')}, ${fault.phase}: ${words}`,
       last: this.lastMarks().find((one) => one.faultId === fault.id)?.mark ?? null,
     };
   }
