@@ -41,6 +41,13 @@ export class Shell {
     this.document.getElementById('main')?.focus();
   }
 
+  /** The cautions were read to their end; the page after them begins at its top. */
+  protected goOn(): void {
+    this.firstUse.markRead();
+    this.document.defaultView?.scrollTo(0, 0);
+    this.document.getElementById('main')?.focus({ preventScroll: true });
+  }
+
   protected closeMenu(): void {
     this.document.getElementById('mf-rooms')?.hidePopover();
   }
