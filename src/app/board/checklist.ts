@@ -25,16 +25,17 @@ import { faultKey, inPhases } from './board-words';
               type="button"
               class="fault"
               [disabled]="isReadOnly()"
-              [attr.aria-label]="row.label"
+              [attr.aria-keyshortcuts]="row.key"
               (click)="pressed.emit(row.fault.id)"
             >
               @if (row.key) {
-                <kbd mf-key-cap>{{ row.key }}</kbd>
+                <kbd mf-key-cap aria-hidden="true">{{ row.key }}</kbd>
               } @else {
                 <span class="no-key"></span>
               }
               <mf-state-mark [mark]="row.mark?.mark ?? null" aria-hidden="true" />
-              <span class="name">{{ row.fault.name }}</span>
+              <span class="name" aria-hidden="true">{{ row.fault.name }}</span>
+              <span class="mf-visually-hidden">{{ row.spoken }}</span>
             </button>
             @if (row.at) {
               <button
@@ -90,8 +91,8 @@ export class Checklist {
       mark,
       at: mark && mark.atMs !== null ? clipTime(mark.atMs) : null,
       key: faultKey(index),
-      // What is to be read on the button, its key too, leads its name.
-      label: `${[faultKey(index), fault.name].filter((part) => part).join(' ')}, ${fault.phase}: ${words}`,
+      /** The name with what the heading and the shape say. */
+      spoken: `${fault.name}, ${fault.phase}: ${words}`,
       last: this.lastMarks().find((one) => one.faultId === fault.id)?.mark ?? null,
     };
   }

@@ -56,7 +56,9 @@ import { MANY_COMMENTS } from './board-words';
           }
         </li>
       } @empty {
-        <li class="mf-quiet">Nothing yet. Stop where you see it and type.</li>
+        <li class="mf-quiet">
+          {{ isReadOnly() ? 'No comments.' : 'Nothing yet. Stop where you see it and type.' }}
+        </li>
       }
     </ol>
     @if (comments().length > many) {
