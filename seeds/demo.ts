@@ -15,8 +15,7 @@ import { calendarOf } from './demo/calendar';
 import { drawAll, writeBrokenClip } from './demo/clips';
 import { openDesk, type DeskPerson } from './demo/desk';
 import { liveHistory, PAIRS, type People } from './demo/history';
-import { LIFTS_OF_THE_ARMS } from './demo/lifts-of-the-arms';
-import { LIFTS_OF_THE_LEGS } from './demo/lifts-of-the-legs';
+import { LIBRARY } from './demo/lifts';
 import { GYM_NAME, PEOPLE, TIME_ZONE, madePassword } from './demo/people';
 import { demoGymId, undoDemo } from './demo/undo';
 
@@ -90,7 +89,7 @@ async function makeDemo(platform: Platform, accountsFile: string): Promise<void>
         return found;
       };
       const lifts = new Map<string, LiftDto>();
-      for (const { lift } of [...LIFTS_OF_THE_LEGS, ...LIFTS_OF_THE_ARMS]) {
+      for (const { lift } of LIBRARY) {
         lifts.set(lift.name, await desk.call<LiftDto>(person('maren'), 'POST', '/api/lifts', lift));
       }
       await desk.work(true);

@@ -30,20 +30,34 @@ function optionsOf(pair: DrawnPair, view: View): ClipOptions {
   };
 }
 
-/** Where the first rep of the clip is lowest, ms. */
-export function bottomMs(pair: DrawnPair, view: View, rep = 1): number {
-  const truth = clipTruth(optionsOf(pair, view));
-  const bottoms = truth.instants.filter((instant) => instant.kind === 'bottom');
-  const bottom = bottoms[Math.min(rep, bottoms.length) - 1];
-  return Math.round(bottom?.atMs ?? truth.durationMs / 2);
-}
+/** An instant of a rep: its lowest or highest point, or where one drawn fault first shows almost in full. */
+export type Moment = 'bottom' | 'top' | { readonly fault: string };
 
-/** Where the rep is finished, ms. */
-export function topMs(pair: DrawnPair, view: View, rep = 1): number {
+const ALMOST_IN_FULL = 0.9;
+
+/** Where a moment of a rep lies in the drawn clip, ms; `rep` counts from 1. */
+export function momentMs(pair: DrawnPair, view: View, moment: Moment, rep: number): number {
   const truth = clipTruth(optionsOf(pair, view));
-  const tops = truth.instants.filter((instant) => instant.kind === 'top');
-  const top = tops[Math.min(rep, tops.length - 1)] ?? tops.at(-1);
-  return Math.round(Math.min(top?.atMs ?? truth.durationMs / 2, truth.durationMs - 100));
+  if (typeof moment === 'string') {
+    const instant = truth.instants.find((one) => one.kind === moment && one.rep === rep);
+    if (!instant) throw new Error(`the drawn ${pair.lift} has no ${moment} of rep ${String(rep)}`);
+    return Math.round(instant.atMs);
+  }
+  const shown = truth.faults.find((one) => one.id === moment.fault);
+  if (!shown) throw new Error(`the drawn ${pair.lift} does not show "${moment.fault}"`);
+  const clean = clipTruth(optionsOf({ ...pair, faults: {} }, view));
+  const phases = truth.phases.filter((phase) => phase.rep === rep);
+  const changes = truth.frames.flatMap(({ frame, atMs, angles }) => {
+    const without = clean.frames[frame];
+    const within = phases.some((phase) => atMs >= phase.startMs && atMs < phase.endMs);
+    return within && without
+      ? [{ atMs, change: Math.abs(angles[shown.angle] - without.angles[shown.angle]) }]
+      : [];
+  });
+  const most = Math.max(...changes.map(({ change }) => change));
+  const first = changes.find(({ change }) => change >= ALMOST_IN_FULL * most);
+  if (!first) throw new Error(`the drawn ${pair.lift} has no rep ${String(rep)}`);
+  return Math.round(first.atMs);
 }
 
 export const fileOf = (dir: string, pair: DrawnPair, view: View) =>

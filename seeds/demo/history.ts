@@ -31,7 +31,7 @@ const HEELS: Answered = {
       view: 'side',
       at: 'bottom',
       rep: 2,
-      body: 'Same again, a little less. Slow the last third down and it stays.',
+      body: 'And here again. Slow the last third down and the soles stay where they are.',
     },
     { view: 'front', at: 'bottom', body: 'Knees track well. Keep exactly this.' },
   ],
@@ -51,8 +51,8 @@ const HINGE: Answered = {
     },
     {
       view: 'side',
-      at: 'top',
-      body: 'The arms finish what the hips should have done.',
+      at: 'fault',
+      body: 'The elbows bend before you are tall: the arms finish what the hips began.',
       fault: 'Arms lift before the hips finish',
     },
   ],
@@ -66,10 +66,16 @@ const HINGE: Answered = {
 const HINGE_CLEARED: Answered = {
   said: [
     { view: 'side', at: 'bottom', body: 'That is the hinge. Look how quiet the knees are now.' },
-    { view: 'side', at: 'top', body: 'Float it one beat longer before you pull it back down.' },
+    {
+      view: 'side',
+      at: 'fault',
+      rep: 2,
+      body: 'Half of what it was, but the arms still start early. Stand up first, then let it fly.',
+      fault: 'Arms lift before the hips finish',
+    },
   ],
-  seen: [],
-  topCue: 'Let it float; the floor throws it',
+  seen: ['Arms lift before the hips finish'],
+  topCue: 'Let the bell float; the floor throws it, not the shoulders',
   call: 'go',
 };
 
@@ -77,14 +83,14 @@ const RIBS: Answered = {
   said: [
     {
       view: 'side',
-      at: 'top',
+      at: 'fault',
       body: 'The ribs open here and the low back takes the bar.',
       fault: 'Ribs flare overhead',
     },
     {
       view: 'front',
-      at: 'top',
-      body: 'The left hand is a palm ahead of the right.',
+      at: 'fault',
+      body: 'The left hand runs a palm ahead of the right here.',
       fault: 'One side presses first',
     },
   ],

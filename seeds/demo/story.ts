@@ -8,17 +8,18 @@ import type {
   takeRoutes,
 } from '../../server/contract';
 import type { LiftId, View } from '../clip-maker';
-import { bottomMs, fileOf, topMs, type DrawnPair } from './clips';
+import { fileOf, momentMs, type DrawnPair } from './clips';
 import type { Desk, DeskPerson } from './desk';
+import { LIBRARY } from './lifts';
 
 type Words = BodyOf<typeof takeRoutes.createTake>;
 type SendAnswer = BodyOf<typeof boardRoutes.sendAnswer>;
 type Board = AnswerOf<typeof boardRoutes.getBoard>;
 
-/** What a coach says at one instant; `at` is the lowest point or the finish of a rep. */
+/** What a coach says at one instant of a rep: its lowest or highest point, or where the fault spoken of shows. */
 export interface Said {
   readonly view: View;
-  readonly at: 'bottom' | 'top';
+  readonly at: 'bottom' | 'top' | 'fault';
   readonly rep?: number;
   readonly body: string;
   /** The library's name of the fault it is about. */
@@ -90,6 +91,13 @@ function faultOf(lift: LiftDto, name: string) {
   return fault;
 }
 
+/** The drawn figure's name for a fault of the library. */
+function drawnFault(lift: LiftId, name: string): string {
+  const id = LIBRARY.find((one) => one.drawn === lift)?.drawnFaults.get(name);
+  if (!id) throw new Error(`the ${lift} can’t be drawn with "${name}"`);
+  return id;
+}
+
 /** A coach picks the take up, comments at the instants that the drawing is true for, marks, and sends. */
 export async function answer(
   desk: Desk,
@@ -105,8 +113,8 @@ export async function answer(
     if (!clip) throw new Error(`take ${takeId} has no ${view} clip`);
     return clip;
   };
-  const instantOf = (said: Said) =>
-    said.at === 'bottom' ? bottomMs(pair, said.view, said.rep) : topMs(pair, said.view, said.rep);
+  const instantOf = ({ view, at, rep = 1, fault = '' }: Said) =>
+    momentMs(pair, view, at === 'fault' ? { fault: drawnFault(pair.lift, fault) } : at, rep);
   for (const said of answered.said) {
     await desk.call(coach, 'POST', `/api/takes/${takeId}/comments`, {
       clipId: clipOf(said.view).id,

@@ -68,9 +68,9 @@ export function startJobLoop(
 
   const run = async <T extends JobType>(kind: JobKind<T>, job: ClaimedJob) => {
     const abort = new AbortController();
-    // A job hands its signal to everything it starts, a dozen uploads at once among them.
-    setMaxListeners(0, abort.signal);
     const signal = AbortSignal.any([abort.signal, stopping.signal]);
+    // A job hands its signal to everything it starts, a dozen uploads at once among them.
+    setMaxListeners(0, signal);
     const heartbeat = setInterval(() => {
       renewJob(database, worker, job, clock.now()).then(
         (kept) => {

@@ -1,0 +1,92 @@
+import { libraryLift } from '../library';
+
+/** Content as a working coach would write it: common practice of the trade, no source. */
+export const GOBLET_SQUAT = libraryLift(
+  'goblet-squat',
+  {
+    name: 'Goblet squat',
+    pattern: 'squat',
+    tempo: '3110',
+    brief: {
+      views: ['front', 'side'],
+      repsMin: 2,
+      repsMax: 3,
+      cameraHeightCm: 80,
+      cameraDistanceCm: 300,
+      inFrame: 'Head to feet, also at the bottom',
+      note: 'Tight shorts or leggings show the knees best.',
+    },
+  },
+  [
+    [
+      'Knees fall in',
+      'up',
+      'front',
+      'Tear the floor apart between your feet',
+      'Band around the knees, two sets of five with a pause',
+      'knees-fall-in',
+    ],
+    [
+      'Heels leave the floor',
+      'bottom',
+      'side',
+      'Leave two full footprints all the way down',
+      'Squat with the toes a hand from a wall, hands on it',
+      'heels-lift',
+    ],
+    [
+      'Stops short of depth',
+      'bottom',
+      'side',
+      'Sit until the stool would take your weight',
+      'Squats to a low box, lowering it by one plate a week',
+      'shallow-depth',
+    ],
+    [
+      'Rounds the back',
+      'bottom',
+      'side',
+      'Show me the print on your shirt at the bottom',
+      'Prying squat, thirty seconds, elbows inside the knees',
+      'rounded-back',
+    ],
+    [
+      'Chest drops',
+      'down',
+      'side',
+      'Ride a lift straight down',
+      'Tempo squats, five seconds down, counting aloud',
+      'chest-drops',
+    ],
+    [
+      'Hips rise before the chest',
+      'up',
+      'side',
+      'Push the ceiling up with your collar',
+      'Pause one hand above the bottom on the way up, three reps',
+      'hips-rise-first',
+    ],
+    [
+      'Bell drifts away from the chest',
+      'down',
+      'side',
+      'Hold the bell as if it were a full mug',
+      'Hold only, twenty seconds, breathing behind the bell',
+      'bell-drifts-away',
+    ],
+    [
+      'Weight shifts to one side',
+      'bottom',
+      'front',
+      'Two equal prints, left and right',
+      'Squat to a box with a scale under each foot',
+      undefined,
+    ],
+  ],
+  [
+    ['easier', 'Squat to a chair', 'Tap the chair, do not sit. The same reps'],
+    ['easier', 'Squat holding a door frame', 'Hands at hip height, no load'],
+    ['same', 'Heels on a plate', 'One centimetre under each heel, the same load'],
+    ['harder', 'Goblet squat with a three-second pause', 'Stay low and breathe once'],
+  ],
+);

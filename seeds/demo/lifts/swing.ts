@@ -1,0 +1,92 @@
+import { libraryLift } from '../library';
+
+/** Content as a working coach would write it: common practice of the trade, no source. */
+export const SWING = libraryLift(
+  'swing',
+  {
+    name: 'Two-handed swing',
+    pattern: 'hinge',
+    tempo: null,
+    brief: {
+      views: ['front', 'side'],
+      repsMin: 3,
+      repsMax: 5,
+      cameraHeightCm: 90,
+      cameraDistanceCm: 350,
+      inFrame: 'Head, feet and the bell at its highest',
+      note: 'Leave room in front of you: the bell travels towards the phone.',
+    },
+  },
+  [
+    [
+      'Squats instead of hinging',
+      'down',
+      'side',
+      'Throw the bell at the wall behind you, high between the legs',
+      'Ten hinges with your back a foot from a wall, touch it every time',
+      'squats-instead-of-hinging',
+    ],
+    [
+      'Bell drops below the knees',
+      'bottom',
+      'side',
+      'Keep the bell above the knees, close to the zip',
+      'Five swings over a foam block set between the feet',
+      'bell-too-low',
+    ],
+    [
+      'Arms lift before the hips finish',
+      'up',
+      'side',
+      'Let the bell float; the floor throws it, not the shoulders',
+      'Towel swings: the towel must stay in line with the bell',
+      'arms-lift-early',
+    ],
+    [
+      'Rounds the low back',
+      'bottom',
+      'side',
+      'Show the logo on your shirt to the wall ahead',
+      'Broomstick along the back, three slow hinges before each set',
+      'rounded-back',
+    ],
+    [
+      'Ribs flare at the top',
+      'top',
+      'side',
+      'Finish as tall as a plank stood on end',
+      'Plank, ten hard seconds, then five swings at once',
+      'ribs-flare',
+    ],
+    [
+      'Leans back to finish',
+      'top',
+      'side',
+      'Stop at tall, squeeze, and wait for the bell',
+      'Swings with your back to a wall an arm away: touch it and you leaned',
+      'leans-back',
+    ],
+    [
+      'Heels leave the floor',
+      'throughout',
+      'side',
+      'Leave two full footprints on the floor',
+      'Barefoot swings on a folded towel',
+      'heels-lift',
+    ],
+    [
+      'Loses the grip of the floor on one side',
+      'bottom',
+      'front',
+      'Both feet push the floor to its corners',
+      'Deadlift to a hold, ten seconds, weight even',
+      undefined,
+    ],
+  ],
+  [
+    ['easier', 'Hinge to a wall', 'No bell. Hands on the hips, touch the wall behind you'],
+    ['easier', 'Dead-stop swing', 'Put the bell down between reps; half the reps'],
+    ['same', 'Swing with the lighter bell', 'Two sizes down, the same count'],
+    ['harder', 'Single-arm swing', 'The free hand stays beside the body'],
+  ],
+);
