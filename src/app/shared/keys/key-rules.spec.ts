@@ -65,5 +65,6 @@ describe('the rules of keys', () => {
     expect(keyWords('Mod+Enter')).toBe('Ctrl Enter');
     expect(keyWords('Shift+ArrowLeft')).toBe('Shift ←');
     expect(keyWords('c')).toBe('C');
+    expect(keyWords('+')).toBe('+');
   });
 });
