@@ -82,11 +82,13 @@ const WORDS: Record<string, string> = {
 
 /** A key as its cap reads: `C`, `Shift ←`, `Ctrl Enter`. */
 export function keyWords(name: string): string {
-  return name
-    // A plus between two parts joins them; one that stands alone is the key itself.
-    .split(/(?<=.)\+(?=.)/)
-    .map((part) =>
-      part === 'Mod' ? 'Ctrl' : (WORDS[part] ?? (part.length === 1 ? part.toUpperCase() : part)),
-    )
-    .join(' ');
+  return (
+    name
+      // A plus between two parts joins them; one that stands alone is the key itself.
+      .split(/(?<=.)\+(?=.)/)
+      .map((part) =>
+        part === 'Mod' ? 'Ctrl' : (WORDS[part] ?? (part.length === 1 ? part.toUpperCase() : part)),
+      )
+      .join(' ')
+  );
 }
