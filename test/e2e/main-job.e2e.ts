@@ -87,7 +87,8 @@ test('from an invitation to a refilm, with clips as phones write them', async ({
     await coach.keyboard.type('Here the heels leave the floor');
     await coach.keyboard.press('Enter');
     await expect(coach.locator('mf-comment-list')).toContainText('Here the heels leave the floor');
-    await coach.keyboard.press('1');
+    // The second of the checklist: faults stand in the order of a rep.
+    await coach.keyboard.press('2');
     await expect(coach.getByRole('button', { name: /Heels lift, bottom: seen/ })).toBeVisible();
     await coach.getByRole('button', { name: 'Mark the rest clear' }).click();
     await expect(coach.getByRole('button', { name: /Knees fall in, up: clear/ })).toBeVisible();
