@@ -12,6 +12,7 @@ export const EVENT_TYPES = [
   'take.answered',
   'take.read',
   'take.unplayable',
+  'take.retried',
   'take.withdrawn',
   'take.replied',
   'clip.uploaded',

@@ -204,7 +204,7 @@ export function createTakes(platform: Platform, deps: TakesDeps): TakesService {
           });
         }
         await repository.setProcessingAgain(trx, actor.gymId, takeId);
-        await tellTake(trx, take, 'take.submitted', actor.userId, now);
+        await tellTake(trx, take, 'take.retried', actor.userId, now);
         await waitWhenReady(trx, await lockedTake(trx, actor.gymId, takeId), now);
         return dtoOf(trx, actor.gymId, takeId);
       }),

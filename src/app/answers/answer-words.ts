@@ -88,6 +88,7 @@ const EVENT_WORDS: Partial<Record<string, string>> = {
   'take.answered': 'answered',
   'take.read': 'read',
   'take.unplayable': 'could not be played',
+  'take.retried': 'tried again',
   'take.withdrawn': 'taken back',
   'take.replied': 'reply',
 };

@@ -32,6 +32,7 @@ export class AnswersStore {
       'take.answered',
       'take.read',
       'take.unplayable',
+      'take.retried',
       'take.withdrawn',
       'take.replied',
     );

@@ -29,6 +29,7 @@ export class AssignmentStore {
       'take.lapsed',
       'take.answered',
       'take.unplayable',
+      'take.retried',
       'take.withdrawn',
       'people.changed',
       'lifts.changed',

@@ -31,6 +31,7 @@ export class AssignmentsStore {
     const changes = live.of(
       'assignment.created',
       'take.submitted',
+      'take.retried',
       'take.withdrawn',
       'people.changed',
       'lifts.changed',

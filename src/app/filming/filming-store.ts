@@ -63,6 +63,7 @@ export class FilmingStore {
         'take.picked-up',
         'take.answered',
         'take.unplayable',
+        'take.retried',
       )
       .pipe(filter(({ takeId }) => takeId === (this.take() ?? this.sent())?.id));
     merge(changes, live.resumed)

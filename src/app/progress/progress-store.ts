@@ -19,7 +19,10 @@ export class ProgressStore {
 
   constructor() {
     const live = inject(LiveEvents);
-    merge(live.of('take.answered', 'take.submitted', 'take.withdrawn', 'clip.ready'), live.resumed)
+    merge(
+      live.of('take.answered', 'take.submitted', 'take.retried', 'take.withdrawn', 'clip.ready'),
+      live.resumed,
+    )
       .pipe(debounceTime(GATHER_MS), takeUntilDestroyed(inject(DestroyRef)))
       .subscribe(() => void this.refresh());
   }

@@ -39,6 +39,7 @@ export class QueueStore {
       'take.unplayable',
       'take.withdrawn',
       'take.submitted',
+      'take.retried',
     );
     live
       .of('take.picked-up')

@@ -88,7 +88,7 @@ export class UnplayablePage {
   constructor() {
     void this.load();
     inject(LiveEvents)
-      .of('take.unplayable', 'take.waiting', 'take.withdrawn')
+      .of('take.unplayable', 'take.retried', 'take.waiting', 'take.withdrawn')
       .pipe(debounceTime(250), takeUntilDestroyed(inject(DestroyRef)))
       .subscribe(() => void this.load());
   }

@@ -39,6 +39,7 @@ export class TodayStore {
       'take.answered',
       'take.read',
       'take.unplayable',
+      'take.retried',
       'take.withdrawn',
       'clip.ready',
       'clip.unplayable',

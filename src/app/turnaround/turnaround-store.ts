@@ -33,6 +33,7 @@ export class TurnaroundStore {
       'take.answered',
       'take.withdrawn',
       'take.unplayable',
+      'take.retried',
       'gym.changed',
     );
     merge(changes, live.resumed)
