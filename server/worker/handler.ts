@@ -18,12 +18,17 @@ export type Conclusion = ((trx: Transaction) => Promise<void>) | null;
 /** Does one job's work. No transaction may be open while it runs. */
 export type Handler<T extends JobType> = (payload: JobPayload<T>, context: JobContext) => Promise<Conclusion>;
 
+export interface DeadEndContext {
+  readonly trx: Transaction;
+  readonly platform: Platform;
+  readonly now: Date;
+  readonly jobId: number;
+  /** The last attempt. */
+  readonly attempt: number;
+}
+
 /** Written, in one transaction, when a job has failed for the last time. */
-export type DeadEnd<T extends JobType> = (
-  payload: JobPayload<T>,
-  trx: Transaction,
-  now: Date,
-) => Promise<void>;
+export type DeadEnd<T extends JobType> = (payload: JobPayload<T>, context: DeadEndContext) => Promise<void>;
 
 export interface JobKind<T extends JobType> {
   readonly run: Handler<T>;

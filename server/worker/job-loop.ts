@@ -56,7 +56,13 @@ export function startJobLoop(
       const result = await failJob(trx, holder, job, error, clock.now());
       const payload = JOB_PAYLOADS[job.type].safeParse(job.payload);
       if (result === 'dead' && kind.onDead && payload.success)
-        await kind.onDead(payload.data as Parameters<typeof kind.onDead>[0], trx, clock.now());
+        await kind.onDead(payload.data as Parameters<typeof kind.onDead>[0], {
+          trx,
+          platform,
+          now: clock.now(),
+          jobId: job.id,
+          attempt: job.attempt,
+        });
       return result;
     });
     const level = outcome === 'dead' ? 'error' : 'warn';

@@ -6,7 +6,15 @@ import { join } from 'node:path';
 import { Transform } from 'node:stream';
 import { pipeline } from 'node:stream/promises';
 import { DEFAULT_LIMITS, RECIPE_VERSION, UnplayableError, makeRenditions, type Renditions } from '../media';
-import { findClip, publishClip, refuseClip, reportProgress, type ClipToProcess } from '../modules/processing';
+import {
+  findClip,
+  giveClipUp,
+  publishClip,
+  refuseClip,
+  reportProgress,
+  type ClipToProcess,
+} from '../modules/processing';
+import { enqueueJob } from '../platform/jobs';
 import type { ObjectStore } from '../platform/object-store';
 import type { DeadEnd, Handler } from './handler';
 
@@ -52,14 +60,25 @@ async function storeRenditions(
   );
 }
 
-/** Deletes renditions that an earlier attempt left without publishing them. */
-async function sweepAttempts(store: ObjectStore, clip: ClipToProcess, home: string): Promise<void> {
-  const left = new Set<string>();
-  for await (const key of store.list(`${home}/r`)) {
-    const prefix = key.slice(0, key.lastIndexOf('/'));
-    if (prefix !== clip.outputPrefix) left.add(prefix);
-  }
-  for (const prefix of left) await store.deletePrefix(`${prefix}/`);
+/** Where everything of a clip lies. */
+const homeOf = (clip: ClipToProcess) => clip.originalKey.slice(0, clip.originalKey.lastIndexOf('/'));
+
+/** Where an attempt of a job puts what it makes. */
+const attemptPrefix = (home: string, jobId: number, attempt: number) =>
+  `${home}/r${RECIPE_VERSION}-${jobId}-${attempt}`;
+
+/**
+ * Deletes renditions that earlier attempts of this job left without publishing them. Another job's are never touched:
+ * it may be about to publish them.
+ */
+async function sweepAttempts(
+  store: ObjectStore,
+  home: string,
+  jobId: number,
+  attempt: number,
+): Promise<void> {
+  for (let earlier = 1; earlier < attempt; earlier += 1)
+    await store.deletePrefix(`${attemptPrefix(home, jobId, earlier)}/`);
 }
 
 /**
@@ -73,8 +92,8 @@ export const processClip: Handler<'clip.process'> = async (
   const { database, store, config, clock } = platform;
   const clip = await findClip(database, gymId, clipId);
   if (!clip) return null;
-  const home = clip.originalKey.slice(0, clip.originalKey.lastIndexOf('/'));
-  const prefix = `${home}/r${RECIPE_VERSION}-${jobId}-${attempt}`;
+  const home = homeOf(clip);
+  const prefix = attemptPrefix(home, jobId, attempt);
   const workRoot = config.workDir ?? join(tmpdir(), 'midfoot-work');
   await mkdir(workRoot, { recursive: true });
   const workDir = await mkdtemp(join(workRoot, 'clip-'));
@@ -90,7 +109,7 @@ export const processClip: Handler<'clip.process'> = async (
       });
   };
   try {
-    await sweepAttempts(store, clip, home);
+    await sweepAttempts(store, home, jobId, attempt);
     onProgress(0);
     const inputPath = join(workDir, 'original');
     await fetchOriginal(store, clip, inputPath, signal);
@@ -121,18 +140,29 @@ export const processClip: Handler<'clip.process'> = async (
         },
         clock.now(),
       );
-      if (!published) await store.deletePrefix(`${prefix}/`);
+      if (!published) await enqueueJob(trx, 'objects.delete', { prefixes: [prefix] }, clock.now());
     };
   } catch (error) {
     await telling;
     if (!(error instanceof UnplayableError)) throw error;
     platform.logger.info({ clipId, reason: error.reason }, 'a clip cannot be used');
-    return (trx) => refuseClip(trx, gymId, clipId, error.reason, clock.now());
+    return (trx) => refuseClip(trx, clip, error.reason, config.publicUrl, clock.now());
   } finally {
     await rm(workDir, { recursive: true, force: true });
   }
 };
 
-/** After the last attempt the clip is given up, with words for the member that say it was not their doing. */
-export const giveUpClip: DeadEnd<'clip.process'> = ({ gymId, clipId }, trx, now) =>
-  refuseClip(trx, gymId, clipId, 'gave-up', now);
+/**
+ * After the last attempt the clip is given up, with words for the member that say it was not their doing; what the
+ * attempts left is deleted.
+ */
+export const giveUpClip: DeadEnd<'clip.process'> = async (
+  { gymId, clipId },
+  { trx, platform, now, jobId, attempt },
+) => {
+  const clip = await findClip(trx, gymId, clipId, true);
+  if (!clip) return;
+  const prefixes = Array.from({ length: attempt }, (_, n) => attemptPrefix(homeOf(clip), jobId, n + 1));
+  await enqueueJob(trx, 'objects.delete', { prefixes }, now);
+  await giveClipUp(trx, clip, jobId, platform.config.publicUrl, now);
+};

@@ -64,7 +64,7 @@ export const mails = {
     renderMail({
       subject: `Your ${facts.liftName.toLowerCase()} clip could not be used`,
       heading: 'One clip could not be used.',
-      paragraphs: [`${facts.memberName}, ${facts.message}`, facts.remedy],
+      paragraphs: [`Hello ${facts.memberName}. ${facts.message}`, facts.remedy],
       action: { label: 'Send it again', link: facts.link },
       reason: 'You get this mail because you sent a take to your gym.',
     }),

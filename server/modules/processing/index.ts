@@ -1,2 +1,2 @@
 export { beat, findClip, pruneProgressEvents, type ClipToProcess } from './processing-repository';
-export { publishClip, refuseClip, reportProgress } from './processing-service';
+export { giveClipUp, publishClip, refuseClip, reportProgress } from './processing-service';

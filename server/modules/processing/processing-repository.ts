@@ -115,6 +115,15 @@ export async function setUnplayable(
   await clip(trx, gymId, clipId).update({ state: 'unplayable', problem_reason: reason });
 }
 
+/** Whether a newer job of the clip was queued after this one. */
+export async function isFollowed(trx: Transaction, clipId: string, jobId: number): Promise<boolean> {
+  const newer: { id: number } | undefined = await trx('jobs')
+    .where('dedupe_key', 'like', `clip.process:${clipId}%`)
+    .andWhere('id', '>', jobId)
+    .first('id');
+  return newer !== undefined;
+}
+
 /** Progress events are of use only while they are fresh. @returns how many went */
 export async function pruneProgressEvents(db: Database, before: Date): Promise<number> {
   return db('events')

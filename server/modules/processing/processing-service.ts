@@ -4,6 +4,7 @@ import { enqueueJob } from '../../platform/jobs';
 import { clipUnplayable, clipsReady } from '../takes';
 import {
   findClip,
+  isFollowed,
   setProcessing,
   setReady,
   setUnplayable,
@@ -18,6 +19,12 @@ const told = (clip: ClipToProcess) => ({
   clipId: clip.id,
   to: { staff: false, userId: clip.memberId },
 });
+
+/** Whether the clip, as it is now, is still the one that was worked on: the same bytes and the same part of them. */
+const isSame = (present: ClipToProcess | null, worked: ClipToProcess): present is ClipToProcess =>
+  present?.originalKey === worked.originalKey &&
+  present.trim?.startMs === worked.trim?.startMs &&
+  present.trim?.endMs === worked.trim?.endMs;
 
 /** Keeps the clip's progress and tells its member live. @param percent 0 to 100 */
 export async function reportProgress(
@@ -34,7 +41,8 @@ export async function reportProgress(
 
 /**
  * Publishes renditions, in the transaction that completes the job.
- * @returns false when the clip was replaced or withdrawn meanwhile; the caller then deletes what it made
+ * @param clip as it was when the work began
+ * @returns false when the clip was replaced, trimmed anew or withdrawn meanwhile; then what was made is of no use
  */
 export async function publishClip(
   trx: Transaction,
@@ -43,7 +51,7 @@ export async function publishClip(
   now: Date,
 ): Promise<boolean> {
   const present = await findClip(trx, clip.gymId, clip.id, true);
-  if (present?.originalKey !== clip.originalKey) return false;
+  if (!isSame(present, clip)) return false;
   await setReady(trx, clip.gymId, clip.id, published, now);
   if (present.outputPrefix && present.outputPrefix !== published.outputPrefix) {
     await enqueueJob(trx, 'objects.delete', { prefixes: [present.outputPrefix] }, now);
@@ -53,17 +61,34 @@ export async function publishClip(
   return true;
 }
 
-/** Marks a clip as one that cannot be used, and its take with it when that was submitted. */
+/**
+ * Marks a clip as one that cannot be used, and its take with it when that was submitted. Does nothing when the clip was
+ * replaced, trimmed anew or withdrawn meanwhile: that is another job's to judge.
+ * @param clip as it was when the work began
+ * @param publicUrl the base of the link in the mail
+ */
 export async function refuseClip(
   trx: Transaction,
-  gymId: string,
-  clipId: string,
+  clip: ClipToProcess,
   reason: string,
+  publicUrl: string,
   now: Date,
 ): Promise<void> {
-  const clip = await findClip(trx, gymId, clipId, true);
-  if (!clip) return;
-  await setUnplayable(trx, gymId, clipId, reason);
+  const present = await findClip(trx, clip.gymId, clip.id, true);
+  if (!isSame(present, clip)) return;
+  await setUnplayable(trx, clip.gymId, clip.id, reason);
   await recordEvent(trx, { ...told(clip), type: 'clip.unplayable' }, now);
-  await clipUnplayable(trx, gymId, clip.takeId, reason, now);
+  await clipUnplayable(trx, { gymId: clip.gymId, takeId: clip.takeId, reason, publicUrl }, now);
+}
+
+/** Gives a clip up after the last attempt of its job, unless a newer job of the clip will judge it. */
+export async function giveClipUp(
+  trx: Transaction,
+  clip: ClipToProcess,
+  jobId: number,
+  publicUrl: string,
+  now: Date,
+): Promise<void> {
+  if (await isFollowed(trx, clip.id, jobId)) return;
+  await refuseClip(trx, clip, 'gave-up', publicUrl, now);
 }

@@ -4,8 +4,8 @@ import { notFound } from '../../platform/errors';
 import { recordEvent } from '../../platform/events';
 import { enqueueJob } from '../../platform/jobs';
 import { liftsByIds } from '../lifts';
-import { notify } from '../notices';
-import { names, staffOf } from '../people';
+import { mails, notify, sendMailLater } from '../notices';
+import { contactOf, names, staffOf } from '../people';
 import { problemOf } from './clip-dto';
 import { clipsOfTakes, type ClipRow } from './take-clips-repository';
 import type { TakeRow } from './take-row';
@@ -80,15 +80,21 @@ export async function clipsReady(trx: Transaction, gymId: string, takeId: string
   if (take) await waitWhenReady(trx, take, now);
 }
 
+export interface Unplayable {
+  readonly gymId: string;
+  readonly takeId: string;
+  readonly reason: string;
+  /** The base of the link in the mail. */
+  readonly publicUrl: string;
+}
+
 /**
  * To be called, in the same transaction, when a clip of the take turned out to be unusable. A submitted take goes
- * back to its member with the reason and the remedy; a draft just shows it at the clip.
+ * back to its member with the reason and the remedy, in the app and by mail; a draft just shows it at the clip.
  */
 export async function clipUnplayable(
   trx: Transaction,
-  gymId: string,
-  takeId: string,
-  reason: string,
+  { gymId, takeId, reason, publicUrl }: Unplayable,
   now: Date,
 ): Promise<void> {
   const take = await lockTake(trx, gymId, takeId);
@@ -97,6 +103,7 @@ export async function clipUnplayable(
   await tellTake(trx, take, 'take.unplayable', null, now);
   const { message, remedy } = problemOf(reason);
   const { lift } = await wordsFor(trx, take);
+  const filming = `/filming/${take.assignmentId}`;
   await notify(
     trx,
     {
@@ -105,10 +112,20 @@ export async function clipUnplayable(
       kind: 'take-unplayable',
       title: `Your ${lift.toLowerCase()} clip could not be used`,
       body: `${message} ${remedy}`,
-      link: `/filming/${take.assignmentId}`,
+      link: filming,
     },
     now,
   );
+  const contact = await contactOf(trx, gymId, take.memberId);
+  if (!contact) return;
+  const mail = mails.takeUnplayable({
+    memberName: contact.name,
+    liftName: lift,
+    message,
+    remedy,
+    link: `${publicUrl}${filming}`,
+  });
+  await sendMailLater(trx, contact.email, mail, now);
 }
 
 /** @throws AppError 404 */

@@ -8,9 +8,10 @@ import { signAccessToken } from '../../../server/platform/access-token';
 import { readConfig, type Config } from '../../../server/platform/config';
 import type { Database } from '../../../server/platform/database';
 import { newId } from '../../../server/platform/ids';
-import { openMailer } from '../../../server/platform/mail';
+import { openMailer, type Mailer } from '../../../server/platform/mail';
 import { openPlatform } from '../../../server/platform/open-platform';
 import type { ObjectStore } from '../../../server/platform/object-store';
+import type { Platform } from '../../../server/platform/platform';
 import { createDatabase } from '../../support/database';
 import { serviceEnvironment } from '../../support/environment';
 
@@ -49,6 +50,9 @@ export interface Scene {
   readonly baseUrl: string;
   readonly database: Database;
   readonly store: ObjectStore;
+  /** What a worker on this database needs; its clock is the scene's. */
+  readonly platform: Platform;
+  readonly mailer: Mailer;
   /** Sets the clock that the api lives by forward. */
   pass(ms: number): void;
   now(): Date;
@@ -139,6 +143,8 @@ export async function openScene(start: Date, settings: NodeJS.ProcessEnv = {}): 
     baseUrl,
     database,
     store,
+    platform,
+    mailer,
     headers,
     pass(ms) {
       now = new Date(now.getTime() + ms);
@@ -306,7 +312,11 @@ export async function openScene(start: Date, settings: NodeJS.ProcessEnv = {}): 
 
     async makeUnplayable(clipId, reason) {
       const row: { gym_id: string } = await database('clips').where({ id: clipId }).first();
-      await database.transaction((trx) => refuseClip(trx, row.gym_id, clipId, reason, now));
+      await database.transaction(async (trx) => {
+        const clip = await findClip(trx, row.gym_id, clipId, true);
+        if (!clip) throw new Error('no such clip');
+        await refuseClip(trx, clip, reason, config.publicUrl, now);
+      });
     },
 
     async waitingTake(member, assignmentId, words = {}) {
