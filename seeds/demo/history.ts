@@ -10,7 +10,7 @@ export type People = Readonly<
 /** The pairs that the history shows; each person is drawn by one seed. */
 export const PAIRS = {
   toveFirst: pairOf('goblet-squat', 60, { 'heels-lift': 0.8, 'chest-drops': 0.4 }),
-  toveSecond: pairOf('goblet-squat', 60, { 'chest-drops': 0.2 }),
+  toveSecond: pairOf('goblet-squat', 60, { 'chest-drops': 0.2 }, ['side']),
   ilmariFirst: pairOf('swing', 49, { 'squats-instead-of-hinging': 0.8, 'arms-lift-early': 0.5 }),
   ilmariSecond: pairOf('swing', 49, { 'arms-lift-early': 0.2 }),
   eddaPress: pairOf('push-press', 28, { 'ribs-flare': 0.8, 'uneven-press': 0.4 }),

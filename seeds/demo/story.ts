@@ -143,8 +143,9 @@ export async function answer(
 }
 
 /** A pair of the lift drawn for one person. */
-export const pairOf = (lift: LiftId, seed: number, faults: Record<string, number> = {}): DrawnPair => ({
-  lift,
-  seed,
-  faults,
-});
+export const pairOf = (
+  lift: LiftId,
+  seed: number,
+  faults: Record<string, number> = {},
+  views: readonly View[] = ['front', 'side'],
+): DrawnPair => ({ lift, seed, faults, views });

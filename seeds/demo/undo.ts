@@ -8,7 +8,7 @@ export async function demoGymId({ database }: Platform, ownerEmail: string): Pro
   return row?.gym_id ?? null;
 }
 
-/** Takes away what a cut-off start left of the demo: every row of its gym, and its objects. */
+/** Takes away what a cut-off start left of the demo: every row of its gym, its jobs, and its objects. */
 export async function undoDemo({ database, store }: Platform, gymId: string): Promise<void> {
   await store.deletePrefix(`gyms/${gymId}/`);
   const tables: { name: string }[] = await database('information_schema.columns')
@@ -18,6 +18,7 @@ export async function undoDemo({ database, store }: Platform, gymId: string): Pr
     // Rows of one gym point at each other in a ring; all of them go.
     await trx.raw('SET FOREIGN_KEY_CHECKS = 0');
     for (const { name } of tables) await trx(name).where('gym_id', gymId).delete();
+    await trx('jobs').whereRaw("JSON_VALUE(payload, '$.gymId') = ?", [gymId]).delete();
     await trx('gyms').where('id', gymId).delete();
     await trx.raw('SET FOREIGN_KEY_CHECKS = 1');
   });
