@@ -1,7 +1,7 @@
 import { gymOf } from '../modules/gyms';
 import { mails, notify, sendMailLater } from '../modules/notices';
 import { contactOf, staffOf } from '../modules/people';
-import { lockedTake, wordsFor } from '../modules/takes';
+import { lockTake, wordsFor } from '../modules/takes';
 import type { Handler } from './handler';
 
 /** Warns coaches, in the app and by mail, of a take whose answer is nearly due and that still waits. */
@@ -9,8 +9,8 @@ export const warnOfTake: Handler<'take.warn'> = ({ takeId, gymId }, { platform }
   const { clock, config } = platform;
   return Promise.resolve(async (trx) => {
     const now = clock.now();
-    const take = await lockedTake(trx, gymId, takeId);
-    if (take.state !== 'waiting' || !take.answerBy) return;
+    const take = await lockTake(trx, gymId, takeId);
+    if (take?.state !== 'waiting' || !take.answerBy) return;
     const [gym, words, staff] = await Promise.all([
       gymOf(trx, gymId),
       wordsFor(trx, take),

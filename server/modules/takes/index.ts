@@ -4,6 +4,6 @@ export { takeDtos, takeDtosByIds } from './take-dtos';
 export { clipUnplayable, clipsReady, lockedTake, tellTake, wordsFor } from './take-flow';
 export { holderOf, type TakeRow } from './take-row';
 export { loadVisible, mayBeSeen } from './take-visibility';
-export { allTakesOf, deleteTakesOf, handedInTakes, setAnswered } from './takes-repository';
+export { allTakesOf, deleteTakesOf, handedInTakes, lockTake, setAnswered } from './takes-repository';
 export { registerTakesRoutes } from './takes-routes';
 export { createTakes, type TakesDeps, type TakesService } from './takes-service';
