@@ -1,5 +1,5 @@
 import { spawn } from 'node:child_process';
-import { mkdir, readFile } from 'node:fs/promises';
+import { access, mkdir, readFile } from 'node:fs/promises';
 import { join } from 'node:path';
 import * as z from 'zod';
 import { buildClient } from './build-client';
@@ -43,14 +43,24 @@ async function runToEnd(file: string, env: NodeJS.ProcessEnv): Promise<void> {
   if (code !== 0) throw new StartError(`${file} ended with ${String(code)}; what is wrong stands above.`);
 }
 
+const accountsFile = (settings: StartSettings) => join(settings.storageDir, 'demo-accounts.json');
+
+/** The accounts are the last thing the seed writes, so they stand for a whole demo. */
+async function isDemoMade(settings: StartSettings): Promise<boolean> {
+  try {
+    await access(accountsFile(settings));
+    return true;
+  } catch {
+    return false; // Not there, or cut off before its end; the seed itself finds out which.
+  }
+}
+
 const Accounts = z.array(
   z.object({ name: z.string(), role: z.string(), email: z.string(), password: z.string() }),
 );
 
 async function demoAccounts(settings: StartSettings): Promise<string[]> {
-  const accounts = Accounts.parse(
-    JSON.parse(await readFile(join(settings.storageDir, 'demo-accounts.json'), 'utf8')),
-  );
+  const accounts = Accounts.parse(JSON.parse(await readFile(accountsFile(settings), 'utf8')));
   return ['owner', 'coach', 'member'].flatMap((role) => {
     const account = accounts.find((one) => one.role === role);
     return account
@@ -92,7 +102,7 @@ async function runInstance(settings: StartSettings): Promise<void> {
     const env = programEnvironment(settings, secrets, ports);
     say('Bringing the database up to date …');
     await runToEnd('server/platform/migrate.ts', env);
-    if (settings.demo) await runToEnd('seeds/demo.ts', env);
+    if (settings.demo && !(await isDemoMade(settings))) await runToEnd('seeds/demo.ts', env);
     say('Starting the api and the worker …');
     for (const program of ownPrograms(settings, env)) await supervisor.keep(() => program.start());
     await greet(settings);
