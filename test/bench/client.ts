@@ -1,0 +1,28 @@
+import { readFile } from 'node:fs/promises';
+import { join } from 'node:path';
+import { brotliCompressSync, gzipSync } from 'node:zlib';
+import { clientDir } from '../../server/start/client-build';
+import { projectDir } from '../../server/start/project';
+import type { Row } from './table';
+
+/** What a browser fetches before the first room: the page, its scripts and styles, compressed as the api serves them. */
+export async function benchClient(): Promise<Row[]> {
+  const dir = join(projectDir, clientDir);
+  const page = await readFile(join(dir, 'index.html'), 'utf8');
+  const names = [...page.matchAll(/(?:src|href)="([^":]+\.(?:js|css))"/g)].flatMap(([, name]) => name ?? []);
+  const files = [
+    Buffer.from(page),
+    ...(await Promise.all([...new Set(names)].map((name) => readFile(join(dir, name))))),
+  ];
+  const kb = (press: (file: Buffer) => Buffer) =>
+    files.reduce((sum, file) => sum + press(file).length, 0) / 1000;
+  return [
+    {
+      metric: 'initial client transfer, brotli (gzip) / uncompressed',
+      bare: `${kb((file) => file).toFixed(0)} kB`,
+      ours: `${kb(brotliCompressSync).toFixed(0)} kB (${kb(gzipSync).toFixed(0)} kB)`,
+      ratio: '',
+      target: '≤ 180 kB',
+    },
+  ];
+}
