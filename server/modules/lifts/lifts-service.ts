@@ -118,7 +118,9 @@ export function createLifts(platform: Platform): Lifts {
       inTransaction(database, async (trx) => {
         const now = clock.now();
         const before = await one(trx, actor.gymId, id);
-        if (change.name) await mustBeFree(trx, actor.gymId, change.name, id);
+        // A lift that is put back on the list may meet one that took its name meanwhile.
+        if (change.name !== undefined || change.archived === false)
+          await mustBeFree(trx, actor.gymId, change.name ?? before.name, id);
         await repository.updateLift(trx, actor.gymId, id, {
           name: change.name,
           pattern: change.pattern,
