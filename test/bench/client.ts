@@ -9,11 +9,18 @@ import type { Row } from './table';
 export async function benchClient(): Promise<Row[]> {
   const dir = join(projectDir, clientDir);
   const page = await readFile(join(dir, 'index.html'), 'utf8');
-  const names = [...page.matchAll(/(?:src|href)="([^":]+\.(?:js|css))"/g)].flatMap(([, name]) => name ?? []);
-  const files = [
-    Buffer.from(page),
-    ...(await Promise.all([...new Set(names)].map((name) => readFile(join(dir, name))))),
-  ];
+  const texts = new Map([['index.html', page]]);
+  const named = (text: string, pattern: RegExp) =>
+    [...text.matchAll(pattern)].flatMap(([, name]) => name ?? []);
+  const queue = named(page, /(?:src|href)="([^":]+\.(?:js|css))"/g);
+  // What the first scripts import at once comes with them; what they import later does not.
+  for (let name = queue.shift(); name !== undefined; name = queue.shift()) {
+    if (texts.has(name)) continue;
+    const text = await readFile(join(dir, name), 'utf8');
+    texts.set(name, text);
+    queue.push(...named(text, /(?:from|import)"\.\/([^"]+\.js)"/g));
+  }
+  const files = [...texts.values()].map((text) => Buffer.from(text));
   const kb = (press: (file: Buffer) => Buffer) =>
     files.reduce((sum, file) => sum + press(file).length, 0) / 1000;
   return [

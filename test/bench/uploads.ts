@@ -55,7 +55,7 @@ export async function benchUploads(stage: Stage, world: World, store: ObjectStor
       bare: ms(bareMs),
       ours: ms(oursMs),
       ratio: times(oursMs / bareMs),
-      target: '',
+      target: '≤ 1.43',
     },
     {
       metric: 'api memory, ten parallel 100 MB uploads / idle',
