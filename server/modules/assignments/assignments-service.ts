@@ -15,7 +15,7 @@ import type { Actor } from '../../platform/http/actor';
 import { decodeCursor, encodeCursor } from '../../platform/http/paging';
 import { newId } from '../../platform/ids';
 import type { Platform } from '../../platform/platform';
-import { liftsByIds } from '../lifts';
+import { listedLift } from '../lifts';
 import { notify } from '../notices';
 import { membersOf } from '../people';
 import { assignmentDtos } from './assignment-dtos';
@@ -172,8 +172,8 @@ export function createAssignments(platform: Platform, deps: AssignmentsDeps): As
       inTransaction(database, async (trx) => {
         const { gymId } = actor;
         const now = clock.now();
-        const lift = (await liftsByIds(trx, gymId, [assignment.liftId])).get(assignment.liftId);
-        if (!lift || lift.archivedAt) {
+        const lift = await listedLift(trx, gymId, assignment.liftId);
+        if (!lift) {
           throw refused('no-such-lift', 'Choose a lift of your gym’s library.', [
             { path: 'liftId', message: 'This lift is not in your library.' },
           ]);
@@ -181,7 +181,7 @@ export function createAssignments(platform: Platform, deps: AssignmentsDeps): As
         const scaleId = assignment.untilAnsweredScaleId ?? null;
         if (scaleId !== null && !lift.scales.some((scale) => scale.id === scaleId)) {
           throw refused('not-of-this-lift', 'Choose a scale of this lift.', [
-            { path: 'untilAnsweredScaleId', message: 'This scale belongs to another lift.' },
+            { path: 'untilAnsweredScaleId', message: 'This scale is not on the lift’s list.' },
           ]);
         }
         const named = 'memberIds' in assignment.audience ? [...new Set(assignment.audience.memberIds)] : null;

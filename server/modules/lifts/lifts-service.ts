@@ -35,6 +35,16 @@ export async function liftsByIds(
   return new Map(lifts.map((lift) => [lift.id, lift]));
 }
 
+/** A lift as its list stands now, without the faults and scales that were taken off; null when it is archived too. */
+export async function listedLift(
+  db: Database | Transaction,
+  gymId: string,
+  id: string,
+): Promise<LiftDto | null> {
+  const [lift] = await repository.findLifts(db, gymId, [id], false);
+  return lift && lift.archivedAt === null ? lift : null;
+}
+
 export function createLifts(platform: Platform): Lifts {
   const { database, clock } = platform;
 
