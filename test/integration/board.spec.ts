@@ -63,6 +63,22 @@ describe('the board', () => {
     });
   });
 
+  it('offers the faults and scales that stand on the list now, and keeps removed ones on answered takes', async () => {
+    const [removed] = lift.faultIds;
+    const archive = { archived_at: scene.now() };
+    await scene.database('lift_faults').where('id', removed).update(archive);
+    await scene.database('lift_scales').where('id', lift.scaleIds[0]).update(archive);
+    const offered = (await board()).lift;
+    expect(offered.faults.map((fault) => fault.id)).toEqual(lift.faultIds.slice(1));
+    expect(offered.scales).toEqual([]);
+    await pickUp();
+    const send = (answer: object) => scene.call(coach, 'POST', `/api/takes/${takeId}/answer`, answer);
+    const withRemoved = { topCue: 'Sit', call: 'scale', scaleId: lift.scaleIds[0] };
+    expect((await send(withRemoved)).status).toBe(422);
+    expect((await send({ topCue: 'Sit', call: 'go' })).status).toBe(200);
+    expect((await board()).lift.faults.map((fault) => fault.id)).toContain(removed);
+  });
+
   it('may be looked at by every coach, and by nobody else', async () => {
     const stranger = await scene.person(await scene.gym(), 'coach');
     const status = async (who: ScenePerson) =>

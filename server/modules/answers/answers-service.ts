@@ -8,7 +8,7 @@ import { conflict, refused } from '../../platform/errors';
 import type { Actor } from '../../platform/http/actor';
 import { newId } from '../../platform/ids';
 import type { Platform } from '../../platform/platform';
-import { liftsByIds } from '../lifts';
+import { liftToJudgeBy } from '../lifts';
 import { mails, notify, sendMailLater } from '../notices';
 import { contactOf, names, staffOf } from '../people';
 import { heldTake } from '../queue';
@@ -40,7 +40,7 @@ export function createAnswersService(platform: Platform, deps: AnswersDeps): Ans
   const { database, clock, config } = platform;
 
   const mustBeScaleOf = async (trx: Transaction, take: TakeRow, scaleId: string) => {
-    const lift = (await liftsByIds(trx, take.gymId, [take.liftId])).get(take.liftId);
+    const lift = await liftToJudgeBy(trx, take.gymId, take.liftId);
     if (!lift?.scales.some((scale) => scale.id === scaleId)) {
       throw refused('not-of-this-lift', 'That scale is not one of this lift’s. Choose another.', [
         { path: 'scaleId', message: 'Choose a scale of this lift.' },

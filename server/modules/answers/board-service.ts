@@ -9,7 +9,7 @@ import type { Actor } from '../../platform/http/actor';
 import { newId } from '../../platform/ids';
 import type { Platform } from '../../platform/platform';
 import { assignmentsByIds } from '../assignments';
-import { liftsByIds } from '../lifts';
+import { liftsByIds, liftToJudgeBy } from '../lifts';
 import { findUser, names } from '../people';
 import { heldTake } from '../queue';
 import { clipsOfTakes, handedInTakes, loadVisible, mayBeSeen, takeDtos, type TakeRow } from '../takes';
@@ -128,9 +128,11 @@ export function createBoard(platform: Platform): BoardService {
         .filter((row) => row.id !== takeId && row.createdAt < take.createdAt)
         .reverse()
         .slice(0, EARLIER_TAKES);
-      const [[dto, ...earlierDtos], lifts, assignments, member, notes, draft, answers] = await Promise.all([
+      const [[dto, ...earlierDtos], lift, assignments, member, notes, draft, answers] = await Promise.all([
         takeDtos(database, gymId, [take, ...earlier], now),
-        liftsByIds(database, gymId, [take.liftId]),
+        take.state === 'answered'
+          ? liftsByIds(database, gymId, [take.liftId]).then((lifts) => lifts.get(take.liftId))
+          : liftToJudgeBy(database, gymId, take.liftId),
         assignmentsByIds(database, gymId, [take.assignmentId]),
         findUser(database, gymId, take.memberId, now),
         notesOn(database, gymId, [takeId]),
@@ -141,7 +143,6 @@ export function createBoard(platform: Platform): BoardService {
           [take, ...earlier].map((row) => row.id),
         ),
       ]);
-      const lift = lifts.get(take.liftId);
       const assignment = assignments.get(take.assignmentId);
       if (!dto || !lift || !assignment) throw notFound('That take');
       return {

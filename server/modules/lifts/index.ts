@@ -1,2 +1,2 @@
 export { registerLiftsRoutes } from './lifts-routes';
-export { createLifts, liftsByIds, listedLift, type Lifts } from './lifts-service';
+export { createLifts, liftsByIds, liftToJudgeBy, listedLift, type Lifts } from './lifts-service';

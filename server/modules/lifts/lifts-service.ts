@@ -35,14 +35,24 @@ export async function liftsByIds(
   return new Map(lifts.map((lift) => [lift.id, lift]));
 }
 
+/** A lift with the faults and scales that stand on its list now, also when the lift itself is archived: to judge by. */
+export async function liftToJudgeBy(
+  db: Database | Transaction,
+  gymId: string,
+  id: string,
+): Promise<LiftDto | null> {
+  const [lift] = await repository.findLifts(db, gymId, [id], false);
+  return lift ?? null;
+}
+
 /** A lift as its list stands now, without the faults and scales that were taken off; null when it is archived too. */
 export async function listedLift(
   db: Database | Transaction,
   gymId: string,
   id: string,
 ): Promise<LiftDto | null> {
-  const [lift] = await repository.findLifts(db, gymId, [id], false);
-  return lift && lift.archivedAt === null ? lift : null;
+  const lift = await liftToJudgeBy(db, gymId, id);
+  return lift?.archivedAt === null ? lift : null;
 }
 
 export function createLifts(platform: Platform): Lifts {
