@@ -2,6 +2,7 @@ import { createServer, type Server } from 'node:http';
 import { type AddressInfo } from 'node:net';
 import { Readable } from 'node:stream';
 import { inject } from 'vitest';
+import type { RouteDescriptor } from '../../../server/contract/route';
 import { buildApp } from '../../../server/app';
 import { publishClip, refuseClip, findClip } from '../../../server/modules/processing';
 import { signAccessToken } from '../../../server/platform/access-token';
@@ -50,6 +51,8 @@ export interface Scene {
   readonly baseUrl: string;
   readonly database: Database;
   readonly store: ObjectStore;
+  /** Every route that is registered. */
+  readonly routes: readonly RouteDescriptor[];
   /** What a worker on this database needs; its clock is the scene's. */
   readonly platform: Platform;
   readonly mailer: Mailer;
@@ -114,7 +117,8 @@ export async function openScene(start: Date, settings: NodeJS.ProcessEnv = {}): 
   const platform = { ...opened.platform, clock: { now: () => now } };
   const { database, store } = platform;
   const mailer = openMailer(config.smtpUrl, config.mailFrom);
-  const server = createServer({ requestTimeout: 0 }, buildApp(platform, mailer).app);
+  const { app, routes } = buildApp(platform, mailer);
+  const server = createServer({ requestTimeout: 0 }, app);
   await listen(server);
   const baseUrl = `http://127.0.0.1:${(server.address() as AddressInfo).port}`;
 
@@ -141,6 +145,7 @@ export async function openScene(start: Date, settings: NodeJS.ProcessEnv = {}): 
 
   const scene: Scene = {
     baseUrl,
+    routes: routes.registered,
     database,
     store,
     platform,
