@@ -37,8 +37,11 @@ export function setSessionCookies(res: Response, names: CookieNames, tokens: Ses
 }
 
 export function clearSessionCookies(res: Response, names: CookieNames): void {
-  res.clearCookie(names.access, { path: '/' });
-  res.clearCookie(names.refresh, { path: '/' });
+  // Browsers take a `__Host-` cookie, an expired one too, only with the attributes it was set with.
+  for (const name of [names.access, names.refresh]) {
+    const { maxAge: _, ...attributes } = options(names.secure, 0);
+    res.clearCookie(name, attributes);
+  }
 }
 
 /** One cookie's value, or null. */
