@@ -3,6 +3,7 @@ import { mkdir } from 'node:fs/promises';
 import { join } from 'node:path';
 import { buildOutput, hashInputs, isBuilt, takeBuild } from './client-build';
 import { takeLock } from './lock';
+import { dyingWithUs } from './processes';
 import { projectDir } from './project';
 
 /**
@@ -20,8 +21,10 @@ export async function buildClient(say: (line: string) => void, signal?: AbortSig
     const output: string[] = [];
     const code = await new Promise<number | null>((resolve, reject) => {
       const build = spawn(
-        process.execPath,
-        ['node_modules/@angular/cli/bin/ng.js', 'build', '--output-path', buildOutput, '--progress=false'],
+        ...dyingWithUs(process.execPath, [
+          ...['node_modules/@angular/cli/bin/ng.js', 'build'],
+          ...['--output-path', buildOutput, '--progress=false'],
+        ]),
         {
           cwd: projectDir,
           stdio: ['ignore', 'pipe', 'pipe'],

@@ -9,21 +9,12 @@ export interface Lock {
 /**
  * Takes the kernel's lock on `file`, which is made when missing. The holder is a small `flock` process that lives
  * as long as the pipe to it, so a killed owner leaves no lock behind.
- * @param wait whether to wait for another owner; otherwise undefined comes back when there is one
+ * @param wait whether to wait for another owner, or how many seconds; undefined comes back when there still is one
  */
-export async function takeLock(file: string, wait: boolean): Promise<Lock | undefined> {
+export async function takeLock(file: string, wait: boolean | number): Promise<Lock | undefined> {
   const holder = spawn(
     'flock',
-    [
-      '--no-fork',
-      ...(wait ? [] : ['--nonblock']),
-      '--conflict-exit-code',
-      '75',
-      file,
-      'sh',
-      '-c',
-      'echo held; exec cat',
-    ],
+    ['--no-fork', ...patience(wait), '--conflict-exit-code', '75', file, 'sh', '-c', 'echo held; exec cat'],
     // A group of its own: Ctrl-C on the terminal must not take the lock away before we have stopped everything.
     { stdio: ['pipe', 'pipe', 'inherit'], detached: true },
   );
@@ -41,4 +32,9 @@ export async function takeLock(file: string, wait: boolean): Promise<Lock | unde
       await ended;
     },
   };
+}
+
+function patience(wait: boolean | number): string[] {
+  if (typeof wait === 'number') return ['--wait', String(wait)];
+  return wait ? [] : ['--nonblock'];
 }

@@ -5,6 +5,7 @@ import * as z from 'zod';
 import { buildClient } from './build-client';
 import { takeLock } from './lock';
 import { isPortFree, rememberedPorts } from './ports';
+import { dyingWithUs } from './processes';
 import { PORT_NAMES, ownPrograms, programEnvironment, servicesOf } from './programs';
 import { projectDir } from './project';
 import { loadSecrets } from './secrets';
@@ -20,18 +21,29 @@ const say = (line: string) => {
 };
 
 const stopping = new AbortController();
-for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP'] as const) {
-  process.on(signal, () => {
-    if (stopping.signal.aborted) return;
-    say('\nStopping …');
-    stopping.abort();
-  });
+const stop = () => {
+  if (stopping.signal.aborted) return;
+  say('\nStopping …');
+  stopping.abort();
+};
+for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP'] as const) process.on(signal, stop);
+
+/** Killing npm tells us nothing: without this we would run on unseen and hold the storage against the next start. */
+function stopWithNpm(): void {
+  if (process.env['npm_lifecycle_event'] !== 'start') return;
+  const npm = process.ppid;
+  setInterval(() => {
+    if (process.ppid !== npm) stop();
+  }, 250).unref();
 }
+
+/** How long a start that was told to end may take over it, seconds. */
+const farewellSeconds = 8;
 
 /** Runs a program of ours to its end, its output before the reader's eyes. */
 async function runToEnd(file: string, env: NodeJS.ProcessEnv): Promise<void> {
   const code = await new Promise<number | null>((resolve, reject) => {
-    const child = spawn(process.execPath, ['--import', 'tsx', file], {
+    const child = spawn(...dyingWithUs(process.execPath, ['--import', 'tsx', file]), {
       cwd: projectDir,
       env,
       stdio: ['ignore', 'inherit', 'inherit'],
@@ -76,16 +88,27 @@ async function waitForStop(): Promise<void> {
   });
 }
 
+/** @throws StartError when the api could not listen where the settings say */
+async function checkPort({ port, host }: StartSettings): Promise<void> {
+  let free: boolean;
+  try {
+    free = await isPortFree(port, host);
+  } catch (error) {
+    const why = error instanceof Error ? error.message : String(error);
+    throw new StartError(`Nothing can listen here (${why}). Choose another HOST or PORT.`, { cause: error });
+  }
+  if (free) return;
+  throw new StartError(
+    `Port ${String(port)} is in use. Stop what listens there, or choose another: PORT=4400 npm start`,
+  );
+}
+
 async function runInstance(settings: StartSettings): Promise<void> {
   const { storageDir } = settings;
   const inStorage = (name: string) => join(storageDir, name);
   const ended = await endSurvivors(inStorage('processes.json'));
   if (ended.length > 0) say(`An earlier start was cut off; ended what it left: ${ended.join(', ')}.`);
-  if (!(await isPortFree(settings.port, settings.host))) {
-    throw new StartError(
-      `Port ${String(settings.port)} is in use. Stop what listens there, or choose another: PORT=4400 npm start`,
-    );
-  }
+  await checkPort(settings);
   const secrets = await loadSecrets(inStorage('secrets.json'));
   const ports = await rememberedPorts(inStorage('ports.json'), PORT_NAMES);
   await mkdir(inStorage('work'), { recursive: true });
@@ -127,9 +150,10 @@ async function greet(settings: StartSettings): Promise<void> {
 }
 
 async function main(): Promise<void> {
+  stopWithNpm();
   const settings = readStartSettings(await givenEnvironment(process.env));
   await mkdir(join(settings.storageDir, 'logs'), { recursive: true });
-  const lock = await takeLock(join(settings.storageDir, 'start.lock'), false);
+  const lock = await takeLock(join(settings.storageDir, 'start.lock'), farewellSeconds);
   if (!lock) {
     throw new StartError(
       `Midfoot already runs on ${settings.storageDir}. Stop it, or keep a second one apart: PORT=4400 STORAGE_DIR=storage-2 npm start`,

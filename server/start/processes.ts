@@ -83,6 +83,14 @@ export function startProcess(command: ProcessCommand): Promise<RunningProcess> {
 }
 
 /**
+ * Program and arguments of a helper that runs to its end beside us. The kernel kills it when we die, however we die:
+ * what a killed start left at work would get in the way of the next.
+ */
+export function dyingWithUs(command: string, args: readonly string[]): [string, string[]] {
+  return ['setpriv', ['--pdeathsig', 'KILL', '--', command, ...args]];
+}
+
+/**
  * Waits until `isReady` says yes. Fails when the program ends first or `timeoutMs` pass; the message carries the
  * last lines of its log.
  */

@@ -4,13 +4,13 @@ import { mkdir, mkdtemp, readFile, rm, stat, writeFile } from 'node:fs/promises'
 import { createServer } from 'node:net';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { readConfig } from '../platform/config';
 import { buildOutput, hashInputs, isBuilt, takeBuild } from './client-build';
 import { takeLock } from './lock';
 import { freePort, isPortFree, rememberedPorts } from './ports';
 import { PORT_NAMES, localUrl, programEnvironment, servicesOf } from './programs';
-import { startProcess } from './processes';
+import { dyingWithUs, startProcess } from './processes';
 import { loadSecrets } from './secrets';
 import { SettingError, readStartSettings } from './settings';
 import { Supervisor } from './supervise';
@@ -112,6 +112,16 @@ describe('the lock of a storage folder', () => {
     expect(next).toBeDefined();
     await next?.release();
   });
+
+  it('is waited for while its owner is about to end', async () => {
+    const file = join(dir, 'start.lock');
+    const lock = await takeLock(file, false);
+    const next = takeLock(file, 30);
+    await lock?.release();
+    const taken = await next;
+    expect(taken).toBeDefined();
+    await taken?.release();
+  });
 });
 
 describe('the stamp of the built client', () => {
@@ -155,6 +165,32 @@ describe('what a cut-off start left', () => {
 
   it('is nothing at the first start', async () => {
     expect(await endSurvivors(join(dir, 'processes.json'))).toEqual([]);
+  });
+});
+
+describe('a helper that runs to its end', () => {
+  it('is killed by the kernel when whoever started it is killed', async () => {
+    const [command, args] = dyingWithUs('sleep', ['600']);
+    const starter = spawn(
+      process.execPath,
+      [
+        '-e',
+        `const c = require('node:child_process').spawn(${JSON.stringify(command)}, ${JSON.stringify(args)});
+         c.on('spawn', () => console.log(c.pid)); setInterval(() => 0, 1000);`,
+      ],
+      { stdio: ['ignore', 'pipe', 'inherit'] },
+    );
+    const [line] = (await once(starter.stdout, 'data')) as [Buffer];
+    const pid = Number(line.toString());
+    // Until setpriv has become the program, the kernel does not know of the wish.
+    await vi.waitFor(async () => {
+      expect(await readFile(`/proc/${String(pid)}/comm`, 'utf8')).toBe('sleep\n');
+    });
+    starter.kill('SIGKILL');
+    await once(starter, 'exit');
+    await vi.waitFor(async () => {
+      expect(await startTicks(pid)).toBeUndefined();
+    });
   });
 });
 
