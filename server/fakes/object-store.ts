@@ -36,6 +36,9 @@ const server = new S3rver({
   configureBuckets: [{ name: bucket, configs: [] }],
 });
 await server.run();
+// Node closes a connection that was idle for five seconds. A busy client notices too late and sends its next object
+// down it, which cannot be sent twice; so it is left to clients to close theirs.
+server.httpServer.keepAliveTimeout = 0;
 process.stdout.write(`Object store ready on 127.0.0.1:${String(port)}\n`);
 
 for (const signal of ['SIGTERM', 'SIGINT'] as const) {

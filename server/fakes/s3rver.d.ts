@@ -1,5 +1,7 @@
 /** The part of s3rver that is used; the package carries no types. */
 declare module 's3rver' {
+  import type { Server } from 'node:http';
+
   interface S3rverOptions {
     directory: string;
     address: string;
@@ -11,6 +13,8 @@ declare module 's3rver' {
 
   export default class S3rver {
     constructor(options: S3rverOptions);
+    /** There once it runs. */
+    readonly httpServer: Server;
     run(): Promise<{ address: string; port: number }>;
     close(): Promise<void>;
   }
