@@ -139,7 +139,7 @@ try {
   const left = await demoGymId(platform, owner.email);
   if (!left || !(await isComplete(accountsFile))) {
     if (left) await undoDemo(platform, left);
-    console.log('Making the demo (one to two minutes, once) …');
+    console.log('Making the demo (a few minutes, once) …');
     await makeDemo(platform, accountsFile);
   }
 } finally {
